@@ -1,0 +1,86 @@
+// Alloy and mold files: looked up by name, read, and turned into what the lower layers take.
+#pragma once
+
+#include <memory>
+#include <optional>
+#include <string>
+
+#include "palier/alloy/diagram.hpp"
+#include "palier/alloy/enthalpy_curve.hpp"
+#include "palier/alloy/path.hpp"
+#include "palier/files/case_file.hpp"
+#include "palier/files/map_reader.hpp"
+
+namespace palier::files {
+
+/// Folders in which materials are looked up.
+struct MaterialFolders {
+  std::string beside;   ///< folder of the case; wins
+  std::string library;  ///< with the folders `alloys` and `molds`
+};
+
+enum class MaterialKind { alloy, mold };
+
+/// Name of the file of a material: every run of characters other than letters, digits, '.', '+' and '-' is one '-'.
+/// "silica sand, dry" -> "silica-sand-dry.yaml".
+std::string material_file_name(const std::string& name);
+
+/// Path of the file of a material: NAME beside the case, then in the library; a value ending in .yaml is a path
+/// relative to the case. @param in_case the value in the case, for the message Throws base::InputError with the nearest
+/// names where there is none.
+std::string find_material(const Reading& reading, const SourceNode& in_case, const std::string& key, MaterialKind kind,
+                          const MaterialFolders& folders);
+
+/// A binary's lines and the composition the alloy file is about.
+struct BinaryAlloy {
+  std::string base, solute;  ///< symbols of the elements
+  double composition = 0;    ///< [mass %]
+  std::shared_ptr<const alloy::PhaseDiagram> diagram;
+};
+
+/// An alloy file as read.
+struct AlloyFile {
+  MaterialFile file;
+  alloy::MetalProperties metal;
+  std::string default_path;
+  std::optional<double> pure_melting_point;  ///< [K]
+  std::optional<BinaryAlloy> binary;
+  std::optional<alloy::SolidificationPath> measured;
+};
+
+/// A mold file as read.
+struct MoldFile {
+  MaterialFile file;
+  alloy::MoldProperties properties;
+};
+
+/// Both throw base::InputError with the place of what is wrong.
+AlloyFile read_alloy(const std::string& path);
+MoldFile read_mold(const std::string& path);
+
+/// A datum with its source that is one value; noted with its source.
+double read_sourced_value(const MapReader& map, const std::string& key);
+
+/// The same for a composition [mass %]. @param base @param solute symbols of the elements, to convert at%
+double read_sourced_composition(const MapReader& map, const std::string& key, const std::string& base,
+                                const std::string& solute);
+
+/// A datum with its source that is one value, or points over what x describes.
+base::Table read_sourced_table(const MapReader& map, const std::string& key, const KeySpec& x);
+
+/// A composition [mass %], converted from at% where it is written so; limits checked.
+double read_composition(const Reading& reading, const SourceNode& node, const std::string& path, const KeySpec& spec,
+                        const std::string& base, const std::string& solute);
+
+/// Runs what may throw a base::InputError without a place and gives it one.
+template <typename Make>
+auto at_place(const Reading& reading, const SourceNode& node, const std::string& key, const Make& make) {
+  try {
+    return make();
+  } catch (const base::InputError& error) {
+    if (!error.place().file.empty()) throw;
+    refuse(reading, node, key, error.what());
+  }
+}
+
+}  // namespace palier::files

@@ -1,0 +1,73 @@
+// The front of the last arrest, placed inside the cell that freezes isothermally.
+#pragma once
+
+#include <array>
+#include <cmath>
+
+#include "palier/heat/body.hpp"
+
+namespace palier::heat {
+
+/// A front at the temperature of the last arrest inside a cell of the metal, solid on one side and liquid (or mush) on
+/// the other. Its unknown is the latent enthalpy: what the cell would hold with all of it at the arrest's temperature.
+/// It may lie outside the cell a little while the neighbor is not yet ready to take it over.
+struct Front {
+  int cell = -1;
+  int solid_side = 0;  ///< +1: solid at the larger radius; -1: at the smaller
+  int came_from = -1;  ///< the cell it was in one step before
+};
+
+/// At most one front from each wall.
+struct Fronts {
+  std::array<Front, 2> front;
+  int count = 0;
+
+  const Front* in_cell(int cell) const {
+    for (int i = 0; i < count; ++i)
+      if (front[static_cast<std::size_t>(i)].cell == cell) return &front[static_cast<std::size_t>(i)];
+    return nullptr;
+  }
+  const Front* with_solid_side(int side) const {
+    for (int i = 0; i < count; ++i)
+      if (front[static_cast<std::size_t>(i)].solid_side == side) return &front[static_cast<std::size_t>(i)];
+    return nullptr;
+  }
+  void add(Front f) { front[static_cast<std::size_t>(count++)] = f; }
+  void remove(int cell) {
+    int kept = 0;
+    for (int i = 0; i < count; ++i)
+      if (front[static_cast<std::size_t>(i)].cell != cell)
+        front[static_cast<std::size_t>(kept++)] = front[static_cast<std::size_t>(i)];
+    count = kept;
+  }
+};
+
+/// What a front needs to know of its metal at the last arrest; `exists` is false where freezing ends without one.
+struct LastArrest {
+  explicit LastArrest(const alloy::EnthalpyCurve& metal);
+  bool exists = false;
+  double temperature = 0;           ///< [K]
+  double potential = 0;             ///< [W/m]
+  double cold = 0, hot = 0;         ///< enthalpy completed and begun [J/m3]
+  double solid_conductivity = 0, liquid_conductivity = 0;  ///< on both sides [W/m/K]
+  double solid_capacity = 0, liquid_capacity = 0;          ///< dH/dT on both sides [J/m3/K]
+};
+
+/// Where a front lies in its cell and how that changes with its unknown.
+struct FrontPlace {
+  double solid_share = 0;                    ///< of the cell's volume
+  double radius = 0, radius_slope = 0;       ///< of the front [m]
+  double solid_depth = 0, liquid_depth = 0;  ///< from the front to the cell's face on either side [m]
+};
+FrontPlace place(const Body& body, const LastArrest& arrest, const Front& front, double unknown);
+
+/// Derivatives of a flow toward larger radius between the front and the center of a neighbor inside the metal.
+struct FrontFlow {
+  double flow = 0;         ///< toward larger radius [W]
+  double by_front = 0;     ///< per unknown of the front's cell
+  double by_neighbor = 0;  ///< per unknown of the neighbor
+};
+FrontFlow flow_to_neighbor(const Body& body, const LastArrest& arrest, const Front& front, const FrontPlace& where,
+                           int side, double neighbor_potential, double neighbor_potential_slope);
+
+}  // namespace palier::heat

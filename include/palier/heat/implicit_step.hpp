@@ -1,0 +1,97 @@
+// One implicit step of the heat equation: TR-BDF2 with Newton on the enthalpy, written once over a number type.
+#pragma once
+
+#include <limits>
+#include <vector>
+
+#include "palier/heat/flow_field.hpp"
+#include "palier/heat/tridiagonal.hpp"
+
+namespace palier::heat {
+
+/// What is worth interpolating within a step besides enthalpies.
+struct Marks {
+  double inner_surface = 0, outer_surface = 0;  ///< temperature of the metal's faces [K]
+  /// Radius of the front with its solid side at the smaller (0) and at the larger radius (1) [m]; NaN: none.
+  std::array<double, 2> front_radius{std::numeric_limits<double>::quiet_NaN(),
+                                     std::numeric_limits<double>::quiet_NaN()};
+};
+
+/// State of all lanes at one time each.
+template <class Real>
+struct State {
+  std::vector<Real> enthalpy;  ///< of each cell [J/m3]
+  std::vector<Real> unknown;   ///< the same but where a front lies in the cell: its latent enthalpy
+  std::vector<Real> flow;      ///< toward larger radius through each face [W]
+  LaneFronts<Real> fronts;
+  std::array<Marks, base::lane_count<Real>> marks;
+};
+
+/// How a step went. A stalled step must be tried again with a shorter length.
+struct StepReport {
+  enum class Status { made, stalled };
+  Status status = Status::made;
+  int iterations = 0;      ///< of Newton, both stages
+  double residual = 0;     ///< largest, relative to the cell's heat scale; of a stalled step
+  int worst_cell = -1;     ///< where
+};
+
+/// Makes steps of a fixed set of lanes; owns all its work space and allocates nothing in a step.
+///
+/// Time: TR-BDF2 (R. E. Bank et al., IEEE Trans. Electron Devices 32 (1985) 1992) in the one-step form with embedded
+/// error estimate of M. E. Hosea & L. F. Shampine, Appl. Numer. Math. 20 (1996) 21.
+/// Newton iterates until the residual is below its tolerance; then the new enthalpy is set from the flows themselves, so
+/// that what one cell loses its neighbor gains exactly.
+template <class Real>
+class ImplicitStep {
+ public:
+  /// @param scale heat scale of each cell [J/m3]: errors are measured against it
+  ImplicitStep(const Bodies<Real>& bodies, std::vector<Real> scale);
+
+  /// A state from enthalpies; no fronts yet.
+  State<Real> start(const std::vector<Real>& enthalpy, const Real& time);
+
+  /// From `from` at `time` over `length` [s] to `to` (its vectors must have their sizes). On success `error` is the norm
+  /// of the local error relative to the metal's heat scale, per lane.
+  StepReport advance(const State<Real>& from, const Real& time, const Real& length, double newton_tolerance,
+                     State<Real>& to, Real& error);
+
+  /// Of the middle stage of the last step, at time + gamma * length.
+  const std::vector<Real>& middle_flow() const { return middle_flow_; }
+  const Marks& middle_marks(int lane) const { return middle_marks_[static_cast<std::size_t>(lane)]; }
+  /// What a boundary at an end has taken out over the last step [J].
+  double heat_out(int lane, const State<Real>& from, const State<Real>& to, double length) const;
+  static double gamma();
+
+  /// Looks for fronts to follow from now on: a cell half frozen between a solid side and a liquid side.
+  void adopt_fronts(State<Real>& state, const Real& time);
+
+ private:
+  bool solve_stage(const Real& time, const Real& weight, double tolerance, StepReport& report);
+  double residual(const Real& weight, int& worst);
+  void assemble(const Real& weight);
+  void move(const Real& time);
+  void move_front(int lane, int number, double change, double time);
+  void hand_over(int lane, const Front& front, double time);
+  void hand_back(int lane, const Front& front, double time);
+  void predict(const std::vector<Real>& rate, const Real& time, const Real& length);
+  void set_rate(const std::vector<Real>& before, const LaneFronts<Real>& fronts_before, const Real& length);
+  Marks marks(int lane) const;
+  void share_error_behind_front(int lane, int side, const Fronts& before);
+  double error_norm(int lane) const;
+  /// Divergence of flow: what a cell gains per time and volume.
+  Real gain(const std::vector<Real>& flow, std::size_t cell) const {
+    return (flow[cell] - flow[cell + 1]) * inverse_volume_[cell];
+  }
+
+  FlowField<Real> field_;
+  std::vector<Real> scale_, inverse_scale_, inverse_volume_;
+  std::vector<double> metal_heat_;  ///< sum of volume times scale over the metal, per lane
+  // Of the step under way:
+  std::vector<Real> unknown_, base_, change_, middle_flow_, middle_unknown_, rate_;
+  LaneFronts<Real> fronts_;
+  std::array<Marks, base::lane_count<Real>> middle_marks_;
+  Tridiagonal<Real> matrix_;
+};
+
+}  // namespace palier::heat

@@ -1,0 +1,84 @@
+// The rules that turn a phase diagram and a composition into a solidification path.
+#include <algorithm>
+#include <boost/math/quadrature/gauss.hpp>
+#include <boost/math/tools/roots.hpp>
+#include <cmath>
+#include <memory>
+#include <utility>
+
+#include "palier/alloy/diagram.hpp"
+#include "palier/base/error.hpp"
+
+namespace palier::alloy {
+namespace {
+
+using Diagram = std::shared_ptr<const PhaseDiagram>;
+
+double lever_fraction(const TieLine& tie, double composition) {
+  return std::clamp((tie.liquid - composition) / (tie.liquid - tie.solid), 0.0, 1.0);
+}
+
+/// Temperature at which the last liquid is gone because the solidus passes the composition.
+double lever_solidus(const PhaseDiagram& diagram, double composition, double low, double liquidus) {
+  const auto solid_excess = [&](double T) { return diagram.tie_line(T).solid - composition; };
+  if (!(solid_excess(low) > 0)) throw base::InputError("lever rule: the solidus does not reach the composition");
+  std::uintmax_t iterations = 200;
+  const auto bracket = boost::math::tools::toms748_solve(solid_excess, low, liquidus,
+                                                         boost::math::tools::eps_tolerance<double>(52), iterations);
+  return 0.5 * (bracket.first + bracket.second);
+}
+
+}  // namespace
+
+SolidificationPath lever_path(const Diagram& diagram, double composition) {
+  SolidificationPath::Parts p;
+  p.rule = "lever";
+  p.liquidus = diagram->liquidus(composition);
+  const std::optional<Invariant> last = diagram->invariant();
+  if (last && diagram->tie_line(last->temperature).solid < composition) {
+    p.end_of_freezing = last->temperature;
+    p.arrests = {
+        {last->temperature, 1 - lever_fraction(diagram->tie_line(last->temperature), composition), last->reaction}};
+  } else {
+    p.end_of_freezing =
+        lever_solidus(*diagram, composition, last ? last->temperature : 0.01 * p.liquidus, p.liquidus);
+  }
+  const double solidus = p.arrests.empty() ? p.end_of_freezing : 0.0;
+  p.fraction_above = [=](double T) {
+    return T <= solidus ? 1.0 : lever_fraction(diagram->tie_line(T), composition);
+  };
+  p.solute = [=](double T) {
+    const TieLine tie = diagram->tie_line(T);
+    return SoluteState{tie.liquid, tie.solid};
+  };
+  return SolidificationPath(std::move(p));
+}
+
+SolidificationPath scheil_path(const Diagram& diagram, double composition) {
+  const std::optional<Invariant> last = diagram->invariant();
+  if (!last)
+    throw base::InputError(
+        "Scheil's rule never ends without an invariant: give a eutectic temperature, or take the lever rule");
+  SolidificationPath::Parts p;
+  p.rule = "scheil";
+  p.liquidus = diagram->liquidus(composition);
+  p.end_of_freezing = last->temperature;
+  // d ln(liquid fraction) = -d ln(C) / (1 - k): the liquid left when its composition has risen to C.
+  const auto left = [diagram, composition](double T) {
+    const auto rate = [&](double log_c) {
+      const double c = std::exp(log_c);
+      return 1 / (1 - diagram->tie_line(diagram->liquidus(c)).solid / c);
+    };
+    const double reached = std::max(diagram->tie_line(T).liquid, composition);
+    return std::exp(-boost::math::quadrature::gauss<double, 15>::integrate(rate, std::log(composition), std::log(reached)));
+  };
+  p.arrests = {{last->temperature, left(last->temperature), last->reaction}};
+  p.fraction_above = [left](double T) { return 1 - left(T); };
+  p.solute = [diagram](double T) {
+    const TieLine tie = diagram->tie_line(T);
+    return SoluteState{tie.liquid, tie.solid};
+  };
+  return SolidificationPath(std::move(p));
+}
+
+}  // namespace palier::alloy

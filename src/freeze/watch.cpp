@@ -1,0 +1,100 @@
+#include "palier/freeze/watch.hpp"
+
+#include <cmath>
+#include <limits>
+
+namespace palier::freeze {
+namespace {
+
+constexpr double kNever = std::numeric_limits<double>::quiet_NaN();
+
+/// Root of a function that is positive at a and not positive at b; regula falsi with the Illinois change, bisection when
+/// it drags. The functions have kinks, so nothing smarter is asked.
+template <class Function>
+double falls_through_zero(const Function& f, double a, double b, double fa, double fb) {
+  const double close = 1e-12 * std::abs(b) + 1e-9 * (b - a);
+  for (int i = 0; i < 80 && b - a > close; ++i) {
+    double t = b - fb * (b - a) / (fb - fa);
+    if (i % 3 == 2 || !(t > a && t < b)) t = 0.5 * (a + b);
+    const double ft = f(t);
+    if (ft > 0) {
+      a = t;
+      fa = ft;
+      fb *= 0.5;
+    } else {
+      b = t;
+      fb = ft;
+      fa *= 0.5;
+    }
+  }
+  return b;
+}
+
+}  // namespace
+
+Watch::Watch(const Profile& profile, const std::vector<double>& radius)
+    : profile_(profile),
+      start_(radius.size(), kNever),
+      end_(radius.size(), kNever),
+      started_(radius.size(), 0),
+      ended_(radius.size(), 0),
+      frozen_(kNever),
+      last_radius_(kNever) {
+  for (const double r : radius) points_.push_back(profile.point(r));
+}
+
+void Watch::look(const heat::StepView& step) {
+  const double a = step.begin(), b = step.end();
+  for (std::size_t k = 0; k < points_.size(); ++k) {
+    const Point& p = points_[k];
+    if (!started_[k]) {
+      const auto f = [&](double t) { return profile_.to_start(step, p, t); };
+      const double fb = f(b);
+      if (fb <= 0) {
+        const double fa = f(a);
+        started_[k] = 1;
+        start_[k] = fa > 0 ? falls_through_zero(f, a, b, fa, fb) : a;
+      }
+    }
+    if (!started_[k]) continue;
+    const auto g = [&](double t) { return profile_.to_end(step, p, t); };
+    const double gb = g(b);
+    if (gb <= 0 && !ended_[k]) {
+      const double ga = g(a);
+      ended_[k] = 1;
+      end_[k] = ga > 0 ? falls_through_zero(g, a, b, ga, gb) : a;
+    } else if (gb > 0 && ended_[k]) {
+      ended_[k] = 0;  // it has melted again; the last freezing counts
+      end_[k] = kNever;
+    }
+  }
+  look_at_whole(step);
+}
+
+void Watch::look_at_whole(const heat::StepView& step) {
+  const heat::LayerCells cells = profile_.cells();
+  int last = -1;
+  double latest = 0;
+  for (int i = cells.begin; i < cells.end; ++i) {
+    const double left = profile_.liquid_left(step, i, step.end());
+    if (left > 0) {
+      frozen_ = last_radius_ = kNever;
+      return;
+    }
+    if (std::isfinite(frozen_)) continue;
+    const auto f = [&](double t) { return profile_.liquid_left(step, i, t); };
+    const double before = f(step.begin());
+    const double t = before > 0 ? falls_through_zero(f, step.begin(), step.end(), before, left) : step.begin();
+    if (last < 0 || t > latest) {
+      last = i;
+      latest = t;
+    }
+  }
+  if (last < 0) return;
+  frozen_ = latest;
+  const heat::Body& body = step.body();
+  const bool at_center = last == 0 && body.inner().kind == heat::Boundary::Kind::adiabatic;
+  last_radius_ = at_center ? body.face()[0] : body.center()[static_cast<std::size_t>(last)];
+}
+
+}  // namespace palier::freeze

@@ -1,0 +1,404 @@
+#include "palier/heat/implicit_step.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <utility>
+
+namespace palier::heat {
+
+using base::all_lanes;
+using base::lane;
+using base::lane_count;
+
+namespace {
+
+constexpr int kMostIterations = 14;
+constexpr double kPastKink = 1e-12;     // relative; a cell stopped at a kink lands just on its far side
+constexpr double kHandBack = -0.35;     // solid share at which a receding front goes back; far from 0, lest it flutter
+constexpr double kAdoptFrom = 0.45;     // solid share from which a cell's front is followed: near one half the flows of
+                                        // a cell with and without a front inside agree
+
+const double kGamma = 2 - std::sqrt(2.0);
+const double kDiagonal = kGamma / 2;         // weight of the stage itself
+const double kWeight = std::sqrt(2.0) / 4;   // weight of the two earlier stages in the last
+
+}  // namespace
+
+template <class Real>
+double ImplicitStep<Real>::gamma() {
+  return kGamma;
+}
+
+template <class Real>
+ImplicitStep<Real>::ImplicitStep(const Bodies<Real>& bodies, std::vector<Real> scale)
+    : field_(bodies), scale_(std::move(scale)), matrix_(scale_.size()) {
+  const std::size_t n = scale_.size();
+  inverse_scale_.assign(n, all_lanes<Real>(0));
+  inverse_volume_ = unknown_ = base_ = change_ = middle_unknown_ = rate_ = inverse_scale_;
+  middle_flow_.assign(n + 1, all_lanes<Real>(0));
+  metal_heat_.assign(lane_count<Real>, 0.0);
+  for (std::size_t i = 0; i < n; ++i) inverse_scale_[i] = 1.0 / scale_[i];
+  for (int l = 0; l < lane_count<Real>; ++l) {
+    const Body& b = field_.body(l);
+    for (std::size_t i = 0; i < n; ++i) lane(inverse_volume_[i], l) = 1 / b.volume()[i];
+    for (int i = b.metal_cells().begin; i < b.metal_cells().end; ++i) {
+      const auto c = static_cast<std::size_t>(i);
+      metal_heat_[static_cast<std::size_t>(l)] += b.volume()[c] * lane(scale_[c], l);
+    }
+  }
+}
+
+template <class Real>
+State<Real> ImplicitStep<Real>::start(const std::vector<Real>& enthalpy, const Real& time) {
+  State<Real> s;
+  s.enthalpy = s.unknown = unknown_ = enthalpy;
+  fronts_ = s.fronts;
+  field_.evaluate(time, s.unknown, s.fronts);
+  s.flow = field_.flow();
+  for (int l = 0; l < lane_count<Real>; ++l) s.marks[static_cast<std::size_t>(l)] = marks(l);
+  return s;
+}
+
+template <class Real>
+StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time, const Real& length,
+                                       double newton_tolerance, State<Real>& to, Real& error) {
+  const std::size_t n = scale_.size();
+  const Real weight = kDiagonal * length;
+  StepReport report;
+
+  // First stage, trapezoidal rule to time + gamma * length.
+  for (std::size_t i = 0; i < n; ++i) base_[i] = from.enthalpy[i] + weight * gain(from.flow, i);
+  fronts_ = from.fronts;
+  unknown_ = from.unknown;
+  predict(rate_, time, Real(kGamma * length));
+  if (!solve_stage(time + kGamma * length, weight, newton_tolerance, report)) return report;
+  middle_flow_ = field_.flow();
+  middle_unknown_ = unknown_;
+  const LaneFronts<Real> middle_fronts = fronts_;
+  for (int l = 0; l < lane_count<Real>; ++l) middle_marks_[static_cast<std::size_t>(l)] = marks(l);
+
+  // Second stage, backward differentiation to time + length.
+  const Real share = kWeight * length;
+  for (std::size_t i = 0; i < n; ++i)
+    base_[i] = from.enthalpy[i] + share * (gain(from.flow, i) + gain(middle_flow_, i));
+  set_rate(from.unknown, from.fronts, Real(kGamma * length));
+  predict(rate_, time, Real((1 - kGamma) * length));
+  if (!solve_stage(time + length, weight, newton_tolerance, report)) return report;
+
+  to.flow = field_.flow();
+  to.unknown = unknown_;
+  to.fronts = fronts_;
+  for (std::size_t i = 0; i < n; ++i) {
+    const Real last = gain(to.flow, i);
+    to.enthalpy[i] = base_[i] + weight * last;
+    // Embedded third-order weights (1-w)/3, (3w+1)/3, d/3 against w, w, d.
+    change_[i] = length * ((4 * kWeight - 1) / 3 * gain(from.flow, i) - gain(middle_flow_, i) / 3.0 +
+                           2 * kDiagonal / 3 * last);
+  }
+  for (int l = 0; l < lane_count<Real>; ++l) {
+    const auto s = static_cast<std::size_t>(l);
+    to.marks[s] = marks(l);
+    const Fronts& fronts = to.fronts[s];
+    // A cell without a front starts the next step from its exact enthalpy.
+    for (std::size_t i = 0; i < n; ++i)
+      if (!fronts.in_cell(static_cast<int>(i))) lane(to.unknown[i], l) = lane(to.enthalpy[i], l);
+  }
+  for (int l = 0; l < lane_count<Real>; ++l) {
+    const auto s = static_cast<std::size_t>(l);
+    for (const int side : {-1, +1}) share_error_behind_front(l, side, from.fronts[s]);
+    for (int k = 0; k < to.fronts[s].count; ++k) {
+      Front& f = to.fronts[s].front[static_cast<std::size_t>(k)];
+      const Front* before = from.fronts[s].with_solid_side(f.solid_side);
+      f.came_from = before ? before->cell : f.cell;
+    }
+  }
+  // Damped by the step's own operator, or stiff cells would make the estimate meaningless.
+  assemble(weight);
+  matrix_.solve(change_);
+  for (int l = 0; l < lane_count<Real>; ++l) lane(error, l) = error_norm(l);
+  set_rate(middle_unknown_, middle_fronts, Real((1 - kGamma) * length));
+  return report;
+}
+
+/// Cells a front has swept in this step and the last share one mean error. Each alone has a kink in time where the front
+/// came or went, and the explicit part of the step takes heat from one cell that the next one owes, which the flow between
+/// them mends in the step that follows. So the estimate of each alone is large, but what one has too much its neighbor
+/// has too little: the error of the front's place is that of their sum.
+template <class Real>
+void ImplicitStep<Real>::share_error_behind_front(int l, int side, const Fronts& before) {
+  const Front* first = before.with_solid_side(side);
+  if (!first) return;
+  const Body& b = field_.body(l);
+  const Front* last = fronts_[static_cast<std::size_t>(l)].with_solid_side(side);
+  const Front* other = fronts_[static_cast<std::size_t>(l)].with_solid_side(-side);
+  // A front that ended in the step swept all there was, up to the other one if that still lives.
+  int end = side > 0 ? b.metal_cells().begin : b.metal_cells().end - 1;
+  if (last) {
+    end = last->cell;
+  } else if (other) {
+    end = other->cell + side;
+  } else if (const Front* met = before.with_solid_side(-side)) {
+    end = met->cell;
+  }
+  double sum = 0, volume = 0;
+  const int start = std::clamp(first->came_from + side, b.metal_cells().begin, b.metal_cells().end - 1);
+  const int low = std::min(start, end), high = std::max(start, end);
+  for (int i = low; i <= high; ++i) {
+    const auto c = static_cast<std::size_t>(i);
+    sum += b.volume()[c] * lane(change_[c], l);
+    volume += b.volume()[c];
+  }
+  for (int i = low; i <= high; ++i) lane(change_[static_cast<std::size_t>(i)], l) = sum / volume;
+}
+
+/// Root of the sum of volume * error^2 / scale over the metal's volume * scale: the error as a share of the heat that
+/// must leave the metal.
+template <class Real>
+double ImplicitStep<Real>::error_norm(int l) const {
+  double sum = 0;
+  const std::vector<double>& volume = field_.body(l).volume();
+  for (std::size_t i = 0; i < change_.size(); ++i) {
+    const double e = lane(change_[i], l);
+    sum += volume[i] * e * e * lane(inverse_scale_[i], l);
+  }
+  return std::sqrt(sum / metal_heat_[static_cast<std::size_t>(l)]);
+}
+
+/// Moves the unknowns along the rate they had, through the same stops as Newton's changes.
+template <class Real>
+void ImplicitStep<Real>::predict(const std::vector<Real>& rate, const Real& time, const Real& length) {
+  for (std::size_t i = 0; i < change_.size(); ++i) change_[i] = rate[i] * length;
+  move(time);
+}
+
+/// Rate of the unknowns from a former stage to now; none where a front came or went, since the unknown changed meaning.
+template <class Real>
+void ImplicitStep<Real>::set_rate(const std::vector<Real>& before, const LaneFronts<Real>& fronts_before,
+                                  const Real& length) {
+  for (std::size_t i = 0; i < rate_.size(); ++i) rate_[i] = (unknown_[i] - before[i]) / length;
+  for (int l = 0; l < lane_count<Real>; ++l) {
+    const Fronts &then = fronts_before[static_cast<std::size_t>(l)], &now = fronts_[static_cast<std::size_t>(l)];
+    for (const Fronts* some : {&then, &now})
+      for (int k = 0; k < some->count; ++k) {
+        const int cell = some->front[static_cast<std::size_t>(k)].cell;
+        if (!then.in_cell(cell) || !now.in_cell(cell)) lane(rate_[static_cast<std::size_t>(cell)], l) = 0;
+      }
+  }
+}
+
+template <class Real>
+Marks ImplicitStep<Real>::marks(int l) const {
+  Marks m;
+  m.inner_surface = field_.inner_surface(l);
+  m.outer_surface = field_.outer_surface(l);
+  const Fronts& fronts = fronts_[static_cast<std::size_t>(l)];
+  for (int k = 0; k < fronts.count; ++k) {
+    const Front& f = fronts.front[static_cast<std::size_t>(k)];
+    m.front_radius[f.solid_side > 0 ? 1 : 0] =
+        place(field_.body(l), field_.arrest(l), f, lane(unknown_[static_cast<std::size_t>(f.cell)], l)).radius;
+  }
+  return m;
+}
+
+template <class Real>
+double ImplicitStep<Real>::heat_out(int l, const State<Real>& from, const State<Real>& to, double length) const {
+  const auto out = [&](const std::vector<Real>& flow) { return lane(flow.back(), l) - lane(flow.front(), l); };
+  return length * (kWeight * (out(from.flow) + out(middle_flow_)) + kDiagonal * out(to.flow));
+}
+
+template <class Real>
+bool ImplicitStep<Real>::solve_stage(const Real& time, const Real& weight, double tolerance, StepReport& report) {
+  for (int iteration = 0;; ++iteration) {
+    field_.evaluate(time, unknown_, fronts_);
+    ++report.iterations;
+    report.residual = residual(weight, report.worst_cell);
+    if (report.residual <= tolerance) return true;
+    if (iteration == kMostIterations || !std::isfinite(report.residual)) {
+      report.status = StepReport::Status::stalled;
+      return false;
+    }
+    assemble(weight);
+    matrix_.solve(change_);
+    move(time);
+  }
+}
+
+/// Leaves minus the residual in change_; returns its largest value relative to the heat scale over cells and lanes.
+template <class Real>
+double ImplicitStep<Real>::residual(const Real& weight, int& worst) {
+  const std::size_t n = change_.size();
+  for (std::size_t i = 0; i < n; ++i) change_[i] = base_[i] - unknown_[i] + weight * gain(field_.flow(), i);
+  double largest = 0;
+  for (int l = 0; l < lane_count<Real>; ++l) {
+    const Fronts& fronts = fronts_[static_cast<std::size_t>(l)];
+    for (int k = 0; k < fronts.count; ++k)
+      lane(change_[static_cast<std::size_t>(fronts.front[static_cast<std::size_t>(k)].cell)], l) -=
+          field_.excess(l, k).excess;
+    for (std::size_t i = 0; i < n; ++i) {
+      const double r = std::abs(lane(change_[i], l) * lane(inverse_scale_[i], l));
+      if (!(r <= largest)) {
+        largest = r;
+        worst = static_cast<int>(i);
+      }
+    }
+  }
+  return largest;
+}
+
+/// Jacobian of unknown + excess - weight * gain.
+template <class Real>
+void ImplicitStep<Real>::assemble(const Real& weight) {
+  const std::size_t n = change_.size();
+  const std::vector<Real>&inner = field_.by_inner(), &outer = field_.by_outer();
+  for (std::size_t i = 0; i < n; ++i) {
+    const Real s = weight * inverse_volume_[i];
+    matrix_.lower[i] = -s * inner[i];
+    matrix_.diagonal[i] = 1.0 - s * (outer[i] - inner[i + 1]);
+    matrix_.upper[i] = s * outer[i + 1];
+  }
+  for (int l = 0; l < lane_count<Real>; ++l) {
+    const Fronts& fronts = fronts_[static_cast<std::size_t>(l)];
+    for (int k = 0; k < fronts.count; ++k) {
+      const auto j = static_cast<std::size_t>(fronts.front[static_cast<std::size_t>(k)].cell);
+      const FrontExcess& e = field_.excess(l, k);
+      lane(matrix_.lower[j], l) += e.by_left;
+      lane(matrix_.diagonal[j], l) += e.by_self;
+      lane(matrix_.upper[j], l) += e.by_right;
+    }
+  }
+}
+
+/// Applies change_ to the unknowns. A cell stops just past the first kink of its curve on the way, or Newton would cycle
+/// about it; a front that leaves its cell is handed over to the next one.
+template <class Real>
+void ImplicitStep<Real>::move(const Real& time) {
+  for (int l = 0; l < lane_count<Real>; ++l) {
+    const Body& b = field_.body(l);
+    const Fronts before = fronts_[static_cast<std::size_t>(l)];
+    for (int layer = 0; layer < b.layers(); ++layer) {
+      const std::vector<double>& kinks = b.curve(layer).kinks();
+      for (int i = b.layer_cells(layer).begin; i < b.layer_cells(layer).end; ++i) {
+        const auto c = static_cast<std::size_t>(i);
+        double& u = lane(unknown_[c], l);
+        const double step = lane(change_[c], l);
+        if (before.count > 0 && before.in_cell(i)) continue;
+        double next = u + step;
+        for (const double kink : kinks) {
+          const double past = kPastKink * std::max(std::abs(kink), lane(scale_[c], l));
+          if (u > kink && next < kink - past) {
+            next = std::max(next, kink - past);
+          } else if (u < kink && next > kink + past) {
+            next = std::min(next, kink + past);
+          }
+        }
+        u = next;
+      }
+    }
+    for (int k = 0; k < before.count; ++k) {
+      const Front& f = before.front[static_cast<std::size_t>(k)];
+      if (fronts_[static_cast<std::size_t>(l)].in_cell(f.cell))
+        move_front(l, k, lane(change_[static_cast<std::size_t>(f.cell)], l), lane(time, l));
+    }
+  }
+}
+
+template <class Real>
+void ImplicitStep<Real>::move_front(int l, int number, double change, double time) {
+  const Front f = fronts_[static_cast<std::size_t>(l)].front[static_cast<std::size_t>(number)];
+  const LastArrest& arrest = field_.arrest(l);
+  double& u = lane(unknown_[static_cast<std::size_t>(f.cell)], l);
+  const double latent = arrest.hot - arrest.cold;
+  u += change;
+  if (u < arrest.cold) {
+    u = arrest.cold;
+    hand_over(l, f, time);
+  } else if ((arrest.hot - u) / latent < kHandBack) {
+    u = arrest.hot - kHandBack * latent;
+    hand_back(l, f, time);
+  }
+}
+
+/// The cell is solid: the front goes on into the next one, or ends where there is none, or meets the other front.
+template <class Real>
+void ImplicitStep<Real>::hand_over(int l, const Front& f, double time) {
+  Fronts& fronts = fronts_[static_cast<std::size_t>(l)];
+  const LastArrest& arrest = field_.arrest(l);
+  const LayerCells metal = field_.body(l).metal_cells();
+  double& u = lane(unknown_[static_cast<std::size_t>(f.cell)], l);
+  u = arrest.cold + field_.excess_of(l, f, arrest.cold, time, unknown_, fronts).excess;
+  fronts.remove(f.cell);
+  const int next = f.cell - f.solid_side;
+  if (next < metal.begin || next >= metal.end) return;
+  double& next_unknown = lane(unknown_[static_cast<std::size_t>(next)], l);
+  if (const Front* met = fronts.in_cell(next)) {
+    const Front other = *met;
+    next_unknown += field_.excess_of(l, other, next_unknown, time, unknown_, fronts).excess;
+    fronts.remove(next);
+    return;
+  }
+  const Front ahead{next, f.solid_side, next};
+  const double enthalpy = next_unknown;
+  double guess = std::clamp(enthalpy, arrest.cold, arrest.hot);
+  for (int i = 0; i < 3; ++i) {
+    guess = enthalpy - field_.excess_of(l, ahead, guess, time, unknown_, fronts).excess;
+    guess = std::clamp(guess, arrest.cold, arrest.hot - 0.9 * kHandBack * (arrest.hot - arrest.cold));
+  }
+  next_unknown = guess;
+  fronts.add(ahead);
+}
+
+/// The front has melted its way out of the cell on the solid side.
+template <class Real>
+void ImplicitStep<Real>::hand_back(int l, const Front& f, double time) {
+  Fronts& fronts = fronts_[static_cast<std::size_t>(l)];
+  const LastArrest& arrest = field_.arrest(l);
+  const LayerCells metal = field_.body(l).metal_cells();
+  double& u = lane(unknown_[static_cast<std::size_t>(f.cell)], l);
+  u = std::max(arrest.hot, u + field_.excess_of(l, f, u, time, unknown_, fronts).excess);
+  fronts.remove(f.cell);
+  const int back = f.cell + f.solid_side;
+  if (back < metal.begin || back >= metal.end || fronts.in_cell(back)) return;
+  fronts.add({back, f.solid_side, back});
+  lane(unknown_[static_cast<std::size_t>(back)], l) = arrest.cold + 0.3 * (arrest.hot - arrest.cold);
+}
+
+template <class Real>
+void ImplicitStep<Real>::adopt_fronts(State<Real>& state, const Real& time) {
+  for (int l = 0; l < lane_count<Real>; ++l) {
+    const LastArrest& arrest = field_.arrest(l);
+    if (!arrest.exists) continue;
+    Fronts& fronts = state.fronts[static_cast<std::size_t>(l)];
+    const LayerCells metal = field_.body(l).metal_cells();
+    for (const int side : {+1, -1}) {
+      if (fronts.with_solid_side(side)) continue;
+      // The first cell from this side that is not solid; all behind it must be.
+      int cell = side > 0 ? metal.end - 1 : metal.begin;
+      while (cell >= metal.begin && cell < metal.end &&
+             lane(state.unknown[static_cast<std::size_t>(cell)], l) < arrest.cold && !fronts.in_cell(cell))
+        cell -= side;
+      if (cell < metal.begin || cell >= metal.end || fronts.in_cell(cell)) continue;
+      const double H = lane(state.unknown[static_cast<std::size_t>(cell)], l);
+      const double share = (arrest.hot - H) / (arrest.hot - arrest.cold);
+      const int ahead = cell - side;
+      const bool liquid_ahead = ahead < metal.begin || ahead >= metal.end ||
+                                lane(state.unknown[static_cast<std::size_t>(ahead)], l) >= arrest.hot;
+      const bool cooled = side * lane(state.flow[static_cast<std::size_t>(side > 0 ? cell + 1 : cell)], l) > 0;
+      if (share < kAdoptFrom || share > 1 || !liquid_ahead || !cooled) continue;
+      const Front front{cell, side, cell};
+      double guess = H;
+      for (int i = 0; i < 5; ++i)
+        guess = std::clamp(H - field_.excess_of(l, front, guess, lane(time, l), state.unknown, fronts).excess,
+                           arrest.cold, arrest.hot);
+      if (guess <= arrest.cold || guess >= arrest.hot) continue;
+      lane(state.unknown[static_cast<std::size_t>(cell)], l) = guess;
+      fronts.add(front);
+      state.marks[static_cast<std::size_t>(l)].front_radius[side > 0 ? 1 : 0] =
+          place(field_.body(l), arrest, front, guess).radius;
+    }
+  }
+}
+
+template class ImplicitStep<double>;
+template class ImplicitStep<base::Lanes<4>>;
+
+}  // namespace palier::heat
