@@ -85,7 +85,7 @@ def beside(axes, labels, low, high):
             heights[i - 1] += overlap / 2
             heights[i] -= overlap / 2
     for height, (_, text) in zip(heights, labels):
-        axes.text(1.012, height, text, transform=axes.transAxes, va="center", fontsize=9)
+        axes.text(1.018, height, text, transform=axes.transAxes, va="center", fontsize=9)
 
 
 def draw_arrests(axes, result, units, low, high):
@@ -111,7 +111,7 @@ def draw_curves(axes, result, units):
         if numpy.isfinite(ends[i]):
             there = numpy.interp(ends[i], time, temperature[:, i])
             axes.plot(units.times(ends[i]), units.temperature(there), "o", color=color, markersize=7,
-                      markeredgecolor="white", markeredgewidth=1.2, zorder=4)
+                      markeredgecolor="white", markeredgewidth=1.2, zorder=4, clip_on=False)
     axes.plot([], [], "o", color="0.4", markersize=7, markeredgecolor="white", label="end of freezing there")
     shown = [units.temperature(temperature.min()), units.temperature(temperature.max()),
              units.temperature(float(result["liquidus_temperature"])),

@@ -22,23 +22,50 @@ namespace {
 class LineIndex {
  public:
   explicit LineIndex(std::string_view text) : text_(text), starts_{0} {
-    for (std::size_t i = 0; i < text.size(); ++i)
+    for (std::size_t i = 0; i < text.size(); ++i) {
       if (text[i] == '\n') starts_.push_back(i + 1);
+      if ((static_cast<unsigned char>(text[i]) & 0xC0U) == 0x80U) continuations_.push_back(i);
+    }
   }
   std::string_view line(int number) const {
     if (number < 1 || static_cast<std::size_t>(number) > starts_.size()) return {};
     const std::size_t start = starts_[static_cast<std::size_t>(number) - 1];
     return text_.substr(start, text_.find('\n', start) - start);
   }
+  /// Whether a text in quotes that begins here is closed: yaml-cpp takes the end of the file for a closing quote.
+  bool is_closed(const YAML::Mark& mark) const {
+    const std::size_t first = byte_of(mark);
+    if (first >= text_.size() || (text_[first] != '"' && text_[first] != '\'')) return true;
+    const char quote = text_[first];
+    for (std::size_t i = first + 1; i < text_.size(); ++i) {
+      const bool doubled = quote == '\'' && text_.substr(i, 2) == "''";
+      if (text_[i] == quote && !doubled) return true;
+      if (doubled || (quote == '"' && text_[i] == '\\')) ++i;
+    }
+    return false;
+  }
   TextPlace place(const YAML::Mark& mark) const {
-    const std::string_view text = line(mark.line + 1);
-    const auto bytes = std::min(static_cast<std::size_t>(std::max(mark.column, 0)), text.size());
-    return {mark.line + 1, place_of_byte(text, bytes).column};
+    const std::size_t start = start_of(mark);
+    const std::size_t byte = byte_of(mark);
+    return {mark.line + 1,
+            1 + static_cast<int>(byte - start - continuations_before(byte) + continuations_before(start))};
   }
 
  private:
+  std::size_t start_of(const YAML::Mark& mark) const {
+    return starts_[std::min(static_cast<std::size_t>(std::max(mark.line, 0)), starts_.size() - 1)];
+  }
+  std::size_t byte_of(const YAML::Mark& mark) const {
+    return std::min(start_of(mark) + static_cast<std::size_t>(std::max(mark.column, 0)), text_.size());
+  }
+  std::size_t continuations_before(std::size_t byte) const {
+    const auto end = std::lower_bound(continuations_.begin(), continuations_.end(), byte);
+    return static_cast<std::size_t>(end - continuations_.begin());
+  }
+
   std::string_view text_;
-  std::vector<std::size_t> starts_;
+  std::vector<std::size_t> starts_;         ///< first byte of each line
+  std::vector<std::size_t> continuations_;  ///< bytes that continue a character
 };
 
 /// Builds the tree from yaml-cpp's events and refuses what a case has no use for.
@@ -67,6 +94,7 @@ class TreeBuilder : public YAML::EventHandler {
                 const std::string& value) override {
     refuse_anchor(mark, anchor);
     refuse_tag(mark, tag);
+    if (!lines_.is_closed(mark)) fail(lines_.place(mark), "found a quote that is not closed", "close it");
     // Escapes in quotes can hold what the bytes of the file may not.
     const auto control = [](char c) { return (c >= 0 && c < 0x20 && c != '\n' && c != '\t') || c == 0x7F; };
     if (std::any_of(value.begin(), value.end(), control))

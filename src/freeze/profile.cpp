@@ -31,8 +31,8 @@ Point Profile::point(double radius) const {
   return p;
 }
 
-/// The front at the step's begin that sweeps the cell in this step or swept it in the last one; its enthalpy has kinks in
-/// time then, and a cubic through both ends of the step says nothing.
+/// The front that sweeps the cell in this step; its enthalpy has kinks in time then, and a cubic through both ends of the
+/// step says nothing.
 const heat::Front* Profile::swept_by(const heat::StepView& step, int cell) const {
   const heat::Fronts &before = step.before().fronts[0], &after = step.after().fronts[0];
   for (int k = 0; k < before.count; ++k) {
@@ -40,8 +40,7 @@ const heat::Front* Profile::swept_by(const heat::StepView& step, int cell) const
     if (!std::isfinite(step.front_radius(f.solid_side, step.end()))) continue;
     const heat::Front* later = after.with_solid_side(f.solid_side);
     const int end = later ? later->cell : (f.solid_side > 0 ? metal_.begin : metal_.end - 1);
-    const int start = std::clamp(f.came_from + f.solid_side, metal_.begin, metal_.end - 1);
-    if (cell >= std::min(start, end) && cell <= std::max(start, end)) return &f;
+    if (cell >= std::min(f.cell, end) && cell <= std::max(f.cell, end)) return &f;
   }
   return nullptr;
 }

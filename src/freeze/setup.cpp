@@ -57,7 +57,7 @@ Spacing spacing(const Wall& wall, double freezing_time, int cells) {
   const double T = wall.layers.front().start_temperature;
   const double reach =
       std::sqrt(p.body.conductivity(T) / (p.density * p.body.heat_capacity(T)) * freezing_time);
-  const double b = std::log(1 + 2 * total / reach);
+  const double b = std::log(1 + 15 * total / reach);
   return {total * b / (cells * std::expm1(b)), std::exp(b / cells)};
 }
 
@@ -76,6 +76,71 @@ std::vector<std::vector<double>> wall_widths(const Wall& wall, double freezing_t
     widths.push_back(heat::graded_widths(l.thickness, n, l.cells ? std::exp(std::log(s.growth) * wanted / n) : s.growth));
     width = std::max(width, widths.back().back() * s.growth);
   }
+  return widths;
+}
+
+/// How much wider the metal's last cell is than its first at a wall: the harder the wall takes heat, the steeper the
+/// metal near it early on, up to a face held at one temperature. Judged by the Biot number of contact and mold in series.
+constexpr double kSteepest = 24;
+
+double grading(const Section& s, const Wall& wall, double freezing_time) {
+  double resistance = 0;
+  if (wall.outer.kind == Boundary::Kind::adiabatic && wall.layers.empty()) return 1;
+  if (!wall.layers.empty()) {
+    const WallLayer& l = wall.layers.front();
+    const double T = l.start_temperature;
+    const double effusivity = std::sqrt(l.properties.body.conductivity(T) * l.properties.density *
+                                        l.properties.body.heat_capacity(T));
+    resistance = std::sqrt(freezing_time) / effusivity;
+    if (l.contact.over != Contact::Over::perfect) resistance += 1 / l.contact.conductance.largest();
+  } else if (wall.outer.kind == Boundary::Kind::film) {
+    resistance = 1 / (wall.outer.film_coefficient + 1e-300);
+  }
+  const double biot = s.depth() / (s.metal.solid.conductivity(s.path->end_of_freezing()) * (resistance + 1e-12));
+  return std::clamp(1 + 2 * biot, 1.0, kSteepest);
+}
+
+/// Cells over `length`, narrowest first.
+std::vector<double> from_wall(double length, int cells, double last_to_first) {
+  return heat::graded_widths(length, cells, std::pow(last_to_first, 1.0 / std::max(1, cells - 1)));
+}
+
+/// Cells of the metal from one wall to the center of symmetry. Where the run is to stop long before the heat has come
+/// from the far end, four fifths of them lie in the part it comes from, and the rest grow beyond.
+std::vector<double> one_sided_widths(const Section& s, int cells, double last_to_first) {
+  constexpr double kReach = 1.5;
+  const auto diffusivity = [&](const alloy::PhaseProperties& p) {
+    return p.conductivity(s.path->liquidus()) / (s.metal.density * p.heat_capacity(s.path->liquidus()));
+  };
+  const double depth = s.depth();
+  const double reach = kReach * std::sqrt(std::max(diffusivity(s.metal.solid), diffusivity(s.metal.liquid)) *
+                                          s.stop.after.value_or(std::numeric_limits<double>::infinity()));
+  if (!(reach < 0.6 * depth)) return from_wall(depth, cells, last_to_first);
+  const int near = std::max(2, cells * 4 / 5), far = std::max(2, cells - near);
+  std::vector<double> widths = from_wall(reach, near, last_to_first);
+  // Growth with which `far` cells, starting from the last width, fill the rest; by bisection.
+  double low = 1, high = 1e3;
+  for (int i = 0; i < 100; ++i) {
+    const double g = 0.5 * (low + high), sum = g * (std::pow(g, far) - 1) / (g - 1);
+    (sum * widths.back() > depth - reach ? high : low) = g;
+  }
+  const std::vector<double> rest = heat::graded_widths(depth - reach, far, 0.5 * (low + high));
+  widths.insert(widths.end(), rest.begin(), rest.end());
+  return widths;
+}
+
+/// Cells of the metal by rising radius.
+std::vector<double> metal_widths(const Section& s, int cells, double freezing_time) {
+  const double outer = grading(s, s.outside, freezing_time);
+  if (!s.inside) {
+    std::vector<double> widths = one_sided_widths(s, cells, outer);
+    std::reverse(widths.begin(), widths.end());
+    return widths;
+  }
+  const int half = cells / 2;
+  std::vector<double> widths = from_wall(s.depth() / 2, half, grading(s, *s.inside, freezing_time));
+  const std::vector<double> rest = from_wall(s.depth() / 2, cells - half, outer);
+  widths.insert(widths.end(), rest.rbegin(), rest.rend());
   return widths;
 }
 
@@ -133,6 +198,12 @@ double rough_freezing_time(const Section& s) {
   return std::clamp(1 / rate, 1e-6, 1e9);
 }
 
+double wall_hardness(const Section& s) {
+  const double time = rough_freezing_time(s);
+  const double outer = grading(s, s.outside, time), inner = s.inside ? grading(s, *s.inside, time) : 1;
+  return std::log(std::max(outer, inner)) / std::log(kSteepest);
+}
+
 Setup set_up(const Section& s, const Resolution& resolution) {
   if (!s.path) throw base::InputError("a section needs a solidification path");
   if (!(s.depth() > 0)) throw base::InputError("a section needs a positive thickness");
@@ -167,7 +238,7 @@ Setup set_up(const Section& s, const Resolution& resolution) {
   const int metal = static_cast<int>(layers.size());
   const auto curve = std::make_shared<const alloy::EnthalpyCurve>(s.metal, *s.path, range.low, range.high);
   const int metal_cells = s.cells.value_or(resolution.metal_cells);
-  layers.push_back({curve, heat::graded_widths(s.depth(), metal_cells, 1.0), {}});
+  layers.push_back({curve, metal_widths(s, metal_cells, time), {}});
   start.push_back(s.pouring_temperature);
   out.layer_names.push_back(s.alloy);
 

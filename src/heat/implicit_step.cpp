@@ -35,6 +35,7 @@ ImplicitStep<Real>::ImplicitStep(const Bodies<Real>& bodies, std::vector<Real> s
   const std::size_t n = scale_.size();
   inverse_scale_.assign(n, all_lanes<Real>(0));
   inverse_volume_ = unknown_ = base_ = change_ = middle_unknown_ = rate_ = inverse_scale_;
+  weight_ = all_lanes<Real>(0);
   middle_flow_.assign(n + 1, all_lanes<Real>(0));
   metal_heat_.assign(lane_count<Real>, 0.0);
   for (std::size_t i = 0; i < n; ++i) inverse_scale_[i] = 1.0 / scale_[i];
@@ -65,6 +66,9 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
   const std::size_t n = scale_.size();
   const Real weight = kDiagonal * length;
   StepReport report;
+  weight_ = weight;
+  for (int l = 0; l < lane_count<Real>; ++l)
+    for (const int side : {-1, +1}) note_solid_gain(l, side, from);
 
   // First stage, trapezoidal rule to time + gamma * length.
   for (std::size_t i = 0; i < n; ++i) base_[i] = from.enthalpy[i] + weight * gain(from.flow, i);
@@ -81,6 +85,8 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
   const Real share = kWeight * length;
   for (std::size_t i = 0; i < n; ++i)
     base_[i] = from.enthalpy[i] + share * (gain(from.flow, i) + gain(middle_flow_, i));
+  for (int l = 0; l < lane_count<Real>; ++l)
+    for (const int side : {-1, +1}) pass_on_debts(l, side, from.fronts[static_cast<std::size_t>(l)]);
   set_rate(from.unknown, from.fronts, Real(kGamma * length));
   predict(rate_, time, Real((1 - kGamma) * length));
   if (!solve_stage(time + length, weight, newton_tolerance, report)) return report;
@@ -103,15 +109,14 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
     for (std::size_t i = 0; i < n; ++i)
       if (!fronts.in_cell(static_cast<int>(i))) lane(to.unknown[i], l) = lane(to.enthalpy[i], l);
   }
-  for (int l = 0; l < lane_count<Real>; ++l) {
-    const auto s = static_cast<std::size_t>(l);
-    for (const int side : {-1, +1}) share_error_behind_front(l, side, from.fronts[s]);
-    for (int k = 0; k < to.fronts[s].count; ++k) {
-      Front& f = to.fronts[s].front[static_cast<std::size_t>(k)];
-      const Front* before = from.fronts[s].with_solid_side(f.solid_side);
-      f.came_from = before ? before->cell : f.cell;
+  for (int l = 0; l < lane_count<Real>; ++l)
+    for (const int side : {-1, +1}) {
+      const Front* before = from.fronts[static_cast<std::size_t>(l)].with_solid_side(side);
+      if (!before) continue;
+      const int last = last_swept(l, *before, from.fronts[static_cast<std::size_t>(l)]);
+      share_error(l, before->cell, last);
     }
-  }
+  if (getenv("DBG") && fronts_[0].count) { int j=fronts_[0].front[0].cell; printf("   h %.3g:", lane(length,0)); for(int c=j-1;c<=j+3;++c) printf(" c%d f %.5g %.5g %.5g |",c, lane(gain(from.flow,c),0)/lane(scale_[c],0), lane(gain(middle_flow_,c),0)/lane(scale_[c],0), lane(gain(to.flow,c),0)/lane(scale_[c],0)); puts(""); }
   // Damped by the step's own operator, or stiff cells would make the estimate meaningless.
   assemble(weight);
   matrix_.solve(change_);
@@ -120,35 +125,32 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
   return report;
 }
 
-/// Cells a front has swept in this step and the last share one mean error. Each alone has a kink in time where the front
-/// came or went, and the explicit part of the step takes heat from one cell that the next one owes, which the flow between
-/// them mends in the step that follows. So the estimate of each alone is large, but what one has too much its neighbor
-/// has too little: the error of the front's place is that of their sum.
+/// The cell in which a front that was there at the begin of the step is now. One that ended swept all there was, up to the
+/// other front if that lives or lived.
 template <class Real>
-void ImplicitStep<Real>::share_error_behind_front(int l, int side, const Fronts& before) {
-  const Front* first = before.with_solid_side(side);
-  if (!first) return;
-  const Body& b = field_.body(l);
-  const Front* last = fronts_[static_cast<std::size_t>(l)].with_solid_side(side);
-  const Front* other = fronts_[static_cast<std::size_t>(l)].with_solid_side(-side);
-  // A front that ended in the step swept all there was, up to the other one if that still lives.
-  int end = side > 0 ? b.metal_cells().begin : b.metal_cells().end - 1;
-  if (last) {
-    end = last->cell;
-  } else if (other) {
-    end = other->cell + side;
-  } else if (const Front* met = before.with_solid_side(-side)) {
-    end = met->cell;
-  }
+int ImplicitStep<Real>::last_swept(int l, const Front& before, const Fronts& all_before) const {
+  const Fronts& now = fronts_[static_cast<std::size_t>(l)];
+  const int side = before.solid_side;
+  if (const Front* still = now.with_solid_side(side)) return still->cell;
+  if (const Front* other = now.with_solid_side(-side)) return other->cell + side;
+  if (const Front* met = all_before.with_solid_side(-side)) return met->cell;
+  const LayerCells metal = field_.body(l).metal_cells();
+  return side > 0 ? metal.begin : metal.end - 1;
+}
+
+/// Cells swept by a front share one mean error. Each alone has a kink in time where the front came or went, so its own
+/// estimate is large, but what one has too much its neighbor has too little: the error of the front's place is that of
+/// their sum.
+template <class Real>
+void ImplicitStep<Real>::share_error(int l, int first, int last) {
+  const std::vector<double>& all_volumes = field_.body(l).volume();
+  const auto low = static_cast<std::size_t>(std::min(first, last)), high = static_cast<std::size_t>(std::max(first, last));
   double sum = 0, volume = 0;
-  const int start = std::clamp(first->came_from + side, b.metal_cells().begin, b.metal_cells().end - 1);
-  const int low = std::min(start, end), high = std::max(start, end);
-  for (int i = low; i <= high; ++i) {
-    const auto c = static_cast<std::size_t>(i);
-    sum += b.volume()[c] * lane(change_[c], l);
-    volume += b.volume()[c];
+  for (std::size_t i = low; i <= high; ++i) {
+    sum += all_volumes[i] * lane(change_[i], l);
+    volume += all_volumes[i];
   }
-  for (int i = low; i <= high; ++i) lane(change_[static_cast<std::size_t>(i)], l) = sum / volume;
+  for (std::size_t i = low; i <= high; ++i) lane(change_[i], l) = sum / volume;
 }
 
 /// Root of the sum of volume * error^2 / scale over the metal's volume * scale: the error as a share of the heat that
@@ -336,7 +338,8 @@ void ImplicitStep<Real>::hand_over(int l, const Front& f, double time) {
     fronts.remove(next);
     return;
   }
-  const Front ahead{next, f.solid_side, next};
+  pass_on_debt(l, f.cell, next, f.solid_side);
+  const Front ahead{next, f.solid_side};
   const double enthalpy = next_unknown;
   double guess = std::clamp(enthalpy, arrest.cold, arrest.hot);
   for (int i = 0; i < 3; ++i) {
@@ -345,6 +348,40 @@ void ImplicitStep<Real>::hand_over(int l, const Front& f, double time) {
   }
   next_unknown = guess;
   fronts.add(ahead);
+}
+
+/// What the solid just behind a front gains per volume and time as the step begins.
+template <class Real>
+void ImplicitStep<Real>::note_solid_gain(int l, int side, const State<Real>& from) {
+  double& noted = solid_gain_[static_cast<std::size_t>(l)][side > 0 ? 1 : 0];
+  noted = 0;
+  const Front* front = from.fronts[static_cast<std::size_t>(l)].with_solid_side(side);
+  if (!front) return;
+  const LayerCells metal = field_.body(l).metal_cells();
+  const int solid = front->cell + side;
+  if (solid >= metal.begin && solid < metal.end)
+    noted = lane(gain(from.flow, static_cast<std::size_t>(solid)), l);
+}
+
+/// A cell that froze within the stage: the explicit part of the stage still took its latent heat for the whole length, or
+/// not yet all of it. What it took too much or too little is the next cell's, so it is passed on through the base of the
+/// stage; left where it is, it would come back as a flow between the two that the step must not believe in. The sum stays.
+template <class Real>
+void ImplicitStep<Real>::pass_on_debt(int l, int cell, int next, int side) {
+  const auto c = static_cast<std::size_t>(cell), n = static_cast<std::size_t>(next);
+  const std::vector<double>& volume = field_.body(l).volume();
+  const double due = lane(unknown_[c], l) -
+                     lane(weight_, l) * solid_gain_[static_cast<std::size_t>(l)][side > 0 ? 1 : 0];
+  lane(base_[n], l) += (lane(base_[c], l) - due) * volume[c] / volume[n];
+  lane(base_[c], l) = due;
+}
+
+/// For all cells that froze before the stage under way begins.
+template <class Real>
+void ImplicitStep<Real>::pass_on_debts(int l, int side, const Fronts& before) {
+  const Front *then = before.with_solid_side(side), *now = fronts_[static_cast<std::size_t>(l)].with_solid_side(side);
+  if (!then || !now) return;
+  for (int cell = then->cell; (cell - now->cell) * side > 0; cell -= side) pass_on_debt(l, cell, cell - side, side);
 }
 
 /// The front has melted its way out of the cell on the solid side.
@@ -358,7 +395,7 @@ void ImplicitStep<Real>::hand_back(int l, const Front& f, double time) {
   fronts.remove(f.cell);
   const int back = f.cell + f.solid_side;
   if (back < metal.begin || back >= metal.end || fronts.in_cell(back)) return;
-  fronts.add({back, f.solid_side, back});
+  fronts.add({back, f.solid_side});
   lane(unknown_[static_cast<std::size_t>(back)], l) = arrest.cold + 0.3 * (arrest.hot - arrest.cold);
 }
 
@@ -384,7 +421,7 @@ void ImplicitStep<Real>::adopt_fronts(State<Real>& state, const Real& time) {
                                 lane(state.unknown[static_cast<std::size_t>(ahead)], l) >= arrest.hot;
       const bool cooled = side * lane(state.flow[static_cast<std::size_t>(side > 0 ? cell + 1 : cell)], l) > 0;
       if (share < kAdoptFrom || share > 1 || !liquid_ahead || !cooled) continue;
-      const Front front{cell, side, cell};
+      const Front front{cell, side};
       double guess = H;
       for (int i = 0; i < 5; ++i)
         guess = std::clamp(H - field_.excess_of(l, front, guess, lane(time, l), state.unknown, fronts).excess,

@@ -24,7 +24,7 @@ TEST_CASE("Schwarz: interface, front and heat flux on steel", "[exact][schwarz]"
 }
 
 // The regime in which the sand cannot take the superheat: the face stays above the melting point for good.
-TEST_CASE("Schwarz: in sand a strong superheat never freezes", "[exact][schwarz]") {
+TEST_CASE("Schwarz: in sand a strong superheat is never gone", "[exact][schwarz]") {
   const Schwarz solution(aluminum_like(), 720, sand_for_aluminum(), 20);
   ExactCase exact = schwarz_half_spaces("Schwarz", aluminum_like(), 720, sand_for_aluminum(), 20, 600);
   exact.section.probes = {0.0};

@@ -38,6 +38,9 @@ struct Setup {
 /// Throws base::InputError where the section contradicts itself.
 Setup set_up(const Section& section, const Resolution& resolution);
 
+/// How hard the walls take heat: 0 hardly, so that the metal stays level; 1 as a face held at one temperature.
+double wall_hardness(const Section& section);
+
 /// Rough time to freeze [s], good to a factor of a few: places the cells of the walls, nothing else.
 double rough_freezing_time(const Section& section);
 

@@ -14,7 +14,6 @@ namespace palier::heat {
 struct Front {
   int cell = -1;
   int solid_side = 0;  ///< +1: solid at the larger radius; -1: at the smaller
-  int came_from = -1;  ///< the cell it was in one step before
 };
 
 /// At most one front from each wall.

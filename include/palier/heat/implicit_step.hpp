@@ -77,7 +77,11 @@ class ImplicitStep {
   void predict(const std::vector<Real>& rate, const Real& time, const Real& length);
   void set_rate(const std::vector<Real>& before, const LaneFronts<Real>& fronts_before, const Real& length);
   Marks marks(int lane) const;
-  void share_error_behind_front(int lane, int side, const Fronts& before);
+  int last_swept(int lane, const Front& before, const Fronts& all_before) const;
+  void share_error(int lane, int first, int last);
+  void note_solid_gain(int lane, int side, const State<Real>& from);
+  void pass_on_debt(int lane, int cell, int next, int side);
+  void pass_on_debts(int lane, int side, const Fronts& before);
   double error_norm(int lane) const;
   /// Divergence of flow: what a cell gains per time and volume.
   Real gain(const std::vector<Real>& flow, std::size_t cell) const {
@@ -92,6 +96,8 @@ class ImplicitStep {
   LaneFronts<Real> fronts_;
   std::array<Marks, base::lane_count<Real>> middle_marks_;
   Tridiagonal<Real> matrix_;
+  Real weight_;  ///< of the implicit part of a stage [s]
+  std::array<std::array<double, 2>, base::lane_count<Real>> solid_gain_{};
 };
 
 }  // namespace palier::heat

@@ -18,7 +18,8 @@ ExactCase alloy_half_space(const std::string& name, const BinaryAlloy& alloy, co
     s.outside.outer = held_at(wall.temperature);
   s.stop.after = until;
   const double front = solution.has_skin() ? solution.end_front(until) : solution.start_front(until);
-  s.probes = {0.25 * front, 0.5 * front, 0.75 * front, 0.98 * front};
+  resolve_half_space(s, front);
+  s.probes = {0.31 * front, 0.53 * front, 0.77 * front, 0.93 * front};
   for (int i = 0; i < 4; ++i) {
     const double depth = s.probes[static_cast<std::size_t>(i)];
     exact.times.push_back({What::start_at_probe, i, solution.start_arrival(depth)});

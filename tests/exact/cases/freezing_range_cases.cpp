@@ -1,3 +1,4 @@
+#include <algorithm>
 #include <cmath>
 #include <numbers>
 #include <stdexcept>
@@ -5,6 +6,7 @@
 #include "exact/cases/cases.hpp"
 #include "exact/cases/sections.hpp"
 #include "exact/solutions/data_sets.hpp"
+#include "palier/freeze/setup.hpp"
 
 namespace palier::exact {
 namespace {
@@ -35,6 +37,23 @@ base::Table bore_flux(const LinearFreezing& solution, heat::Shape shape, double 
   return {time, flux};
 }
 
+struct Grid {
+  int cells;
+  double width;
+};
+
+/// Even grid from the bore to about `radius`, with the default number of cells between the places of the
+/// end-of-freezing front at the beginning and the end of the run. At the beginning the front lies on a face of it and
+/// of its companion of half as many cells, so that every cell starts on one side of the arrest.
+Grid grid_around(const LinearFreezing& solution, double bore_radius, double begin, double until, double radius,
+                 const freeze::Section& section) {
+  const double first = solution.end_front(begin),
+               width = (solution.end_front(until) - first) / freeze::resolution_for(section).metal_cells;
+  const double frozen = 2 * std::max(1.0, std::round((first - bore_radius) / (2 * width)));
+  const double fitting = (first - bore_radius) / frozen;
+  return {2 * static_cast<int>(std::ceil((radius - bore_radius) / (2 * fitting))), fitting};
+}
+
 }  // namespace
 
 ExactCase linear_half_space(const std::string& name, const LinearAlloy& alloy, double wall, double start,
@@ -47,7 +66,8 @@ ExactCase linear_half_space(const std::string& name, const LinearAlloy& alloy, d
   s.pouring_temperature = kelvin(start);
   s.outside.outer = held_at(wall);
   s.stop.after = until;
-  s.probes = {0.25 * front, 0.5 * front, 0.75 * front, 0.98 * front};
+  resolve_half_space(s, front);
+  s.probes = {0.31 * front, 0.53 * front, 0.77 * front, 0.93 * front};
   know_arrivals(exact, solution, s.probes, 0, alloy.pure());
   return exact;
 }
@@ -58,10 +78,15 @@ ExactCase shell_around_sink(const std::string& name, const LinearAlloy& alloy, c
     throw std::domain_error("the bore must have frozen before the run begins");
   ExactCase exact{name, section_of(alloy), {}};
   freeze::Section& s = exact.section;
-  const double radius = solution.start_front(until) + reach(alloy.liquid, until);
   s.shape = shape;
-  s.thickness = 2 * radius;
   s.bore = 2 * bore_radius;
+  const Grid grid =
+      grid_around(solution, bore_radius, begin, until, solution.start_front(until) + reach(alloy.liquid, until), s);
+  s.cells = grid.cells;
+  const double radius = bore_radius + grid.cells * grid.width;
+  s.thickness = 2 * radius;
+  const double power = 1 + static_cast<int>(shape);
+  s.accuracy *= std::pow(solution.end_front(until) / radius, power);
   s.start_profile = [solution, begin](double r) { return kelvin(solution.temperature(r, begin)); };
   s.pouring_temperature = kelvin(solution.temperature(radius, begin));
   s.inside.emplace();
@@ -69,7 +94,7 @@ ExactCase shell_around_sink(const std::string& name, const LinearAlloy& alloy, c
   s.inside->outer.heat_flux = bore_flux(solution, shape, bore_radius, begin, until);
   s.stop.after = until - begin;
   // Places that neither front has reached when the run begins, and that both pass.
-  const double first = 1.02 * solution.start_front(begin), last = 0.98 * solution.end_front(until);
+  const double first = 1.2 * solution.start_front(begin), last = 0.95 * solution.end_front(until);
   const std::vector<double> places{first, 0.5 * (first + last), last};
   for (const double r : places) s.probes.push_back(radius - r);
   know_arrivals(exact, solution, places, begin, alloy.pure());

@@ -16,7 +16,8 @@ ExactCase schwarz_half_spaces(const std::string& name, const PureMetal& metal, d
   s.outside = mold_wall(mold, reach(mold, until), mold_start);
   s.stop.after = until;
   if (!solution.freezes()) return exact;
-  s.probes = {0.25 * front, 0.5 * front, 0.75 * front, 0.98 * front};
+  resolve_half_space(s, front);
+  s.probes = {0.31 * front, 0.53 * front, 0.77 * front, 0.93 * front};
   for (int i = 0; i < 4; ++i) {
     const double ratio = s.probes[static_cast<std::size_t>(i)] / front;
     exact.times.push_back({KnownTime::What::end_at_probe, i, ratio * ratio * until});

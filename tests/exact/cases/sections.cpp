@@ -5,6 +5,7 @@
 #include <utility>
 
 #include "palier/alloy/diagram.hpp"
+#include "palier/freeze/setup.hpp"
 
 namespace palier::exact {
 namespace {
@@ -77,6 +78,16 @@ freeze::Wall mold_wall(const Phase& mold, double thickness, double start) {
   return {{layer}, heat::Boundary{}};
 }
 
-double reach(const Phase& phase, double t) { return 9 * std::sqrt(phase.diffusivity() * t); }
+double reach(const Phase& phase, double t) { return 6 * std::sqrt(phase.diffusivity() * t); }
+
+void resolve_frozen_part(freeze::Section& section, double frozen_depth, double frozen_share) {
+  const int frozen_cells = freeze::resolution_for(section).metal_cells;
+  section.cells = static_cast<int>(std::lround(frozen_cells * section.depth() / frozen_depth));
+  section.accuracy *= frozen_share;
+}
+
+void resolve_half_space(freeze::Section& section, double frozen_depth) {
+  resolve_frozen_part(section, frozen_depth, frozen_depth / section.depth());
+}
 
 }  // namespace palier::exact

@@ -28,7 +28,15 @@ heat::Boundary film_to(double film, double celsius);
 /// Mold in perfect contact, adiabatic outside. @param start [degC]
 freeze::Wall mold_wall(const Phase& mold, double thickness, double start);
 
-/// Length after which a half space at time t [s] no longer feels its face: 9 sqrt(alpha t), where erfc is 2e-10.
+/// Length at which a half space that ends there still answers as if it went on, up to time t [s]: 6 sqrt(alpha t). The
+/// wave at the end is erfc(3) = 2e-5 of that at the face; back at the face it is erfc(6) = 2e-17.
 double reach(const Phase& phase, double t);
+
+/// Gives the part of a section that freezes within the run the resolution that a whole section gets by default: the
+/// default number of cells within it, and a tolerance, which is a share of the heat of the whole section, by as much
+/// smaller as the part is. @param frozen_depth [m] @param frozen_share of the volume, 0..1
+void resolve_frozen_part(freeze::Section& section, double frozen_depth, double frozen_share);
+/// Half space up to the depth that freezes.
+void resolve_half_space(freeze::Section& section, double frozen_depth);
 
 }  // namespace palier::exact

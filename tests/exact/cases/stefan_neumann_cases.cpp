@@ -32,7 +32,8 @@ ExactCase neumann_half_space(const std::string& name, const PureMetal& metal, do
   s.pouring_temperature = kelvin(start);
   s.outside.outer = held_at(wall);
   s.stop.after = until;
-  s.probes = {0.25 * front, 0.5 * front, 0.75 * front, 0.98 * front};
+  resolve_half_space(s, front);
+  s.probes = {0.31 * front, 0.53 * front, 0.77 * front, 0.93 * front};
   for (int i = 0; i < 4; ++i)
     exact.times.push_back({What::end_at_probe, i, solution.arrival(s.probes[static_cast<std::size_t>(i)])});
   return exact;
