@@ -3,7 +3,7 @@ find_package(Eigen3 3.4 REQUIRED NO_MODULE)
 find_package(Boost 1.74 REQUIRED)
 find_package(yaml-cpp 0.7 REQUIRED)
 find_package(fmt 9 REQUIRED)
-find_package(spdlog REQUIRED)
+find_package(nlohmann_json 3.11 REQUIRED)
 find_package(CLI11 REQUIRED)
 
 # The MPI build of HDF5 would be picked up where both are installed: ask for the serial one by its pkg-config name.

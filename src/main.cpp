@@ -1,1 +1,3 @@
-int main() { return 0; }
+#include "palier/app/commands.hpp"
+
+int main(int argc, char** argv) { return palier::app::main(argc, argv); }

@@ -47,6 +47,7 @@ class BinarySide final : public PhaseDiagram {
     return Invariant{"eutectic", *lines_.eutectic_temperature, largest_};
   }
   double largest_composition() const override { return largest_; }
+  std::optional<double> constant_partition() const override { return lines_.partition_coefficient; }
 
  private:
   /// Inverse of the liquidus, continued straight beyond its last point (the end of freezing of a lever path may lie

@@ -1,6 +1,5 @@
 // The rules that turn a phase diagram and a composition into a solidification path.
 #include <algorithm>
-#include <boost/math/quadrature/gauss.hpp>
 #include <boost/math/tools/roots.hpp>
 #include <cmath>
 #include <memory>
@@ -64,13 +63,10 @@ SolidificationPath scheil_path(const Diagram& diagram, double composition) {
   p.liquidus = diagram->liquidus(composition);
   p.end_of_freezing = last->temperature;
   // d ln(liquid fraction) = -d ln(C) / (1 - k): the liquid left when its composition has risen to C.
-  const auto left = [diagram, composition](double T) {
-    const auto rate = [&](double log_c) {
-      const double c = std::exp(log_c);
-      return 1 / (1 - diagram->tie_line(diagram->liquidus(c)).solid / c);
-    };
-    const double reached = std::max(diagram->tie_line(T).liquid, composition);
-    return std::exp(-boost::math::quadrature::gauss<double, 15>::integrate(rate, std::log(composition), std::log(reached)));
+  const std::optional<double> k = diagram->constant_partition();
+  if (!k) throw base::InputError("Scheil's rule needs a constant partition coefficient here");
+  const auto left = [diagram, composition, power = -1 / (1 - *k)](double T) {
+    return std::pow(std::max(diagram->tie_line(T).liquid / composition, 1.0), power);
   };
   p.arrests = {{last->temperature, left(last->temperature), last->reaction}};
   p.fraction_above = [left](double T) { return 1 - left(T); };

@@ -28,10 +28,13 @@ std::string read_bytes(const fs::path& path, const std::string& what) {
   std::ifstream stream(path, std::ios::binary);
   if (!stream)
     throw base::FileTrouble(fmt::format("{}: cannot read the {}: {}", path.string(), what, std::strerror(errno)));
-  std::string text(SourceLimits::bytes + 1, '\0');
-  stream.read(text.data(), static_cast<std::streamsize>(text.size()));
+  // One block past the limit is enough for the check of the size to refuse the file.
+  std::string text, block(64 * 1024, '\0');
+  while (stream && text.size() <= SourceLimits::bytes) {
+    stream.read(block.data(), static_cast<std::streamsize>(block.size()));
+    text.append(block, 0, static_cast<std::size_t>(stream.gcount()));
+  }
   if (stream.bad()) throw base::FileTrouble(fmt::format("{}: reading the {} failed", path.string(), what));
-  text.resize(static_cast<std::size_t>(stream.gcount()));
   return text;
 }
 

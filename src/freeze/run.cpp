@@ -4,6 +4,7 @@
 #include <cmath>
 #include <ctime>
 #include <limits>
+#include <memory>
 #include <optional>
 #include <string>
 
@@ -65,9 +66,10 @@ std::optional<double> stops_in(const Section& s, const Watch& watch, const Profi
   return stop;
 }
 
-Outcome march(const Section& s, const Resolution& resolution, std::optional<double> record_every,
+Outcome march(const Section& s, const Resolution& resolution,
+              const std::shared_ptr<const alloy::EnthalpyCurve>& metal, std::optional<double> record_every,
               const std::function<void(double)>& at_time) {
-  const Setup setup = set_up(s, resolution);
+  const Setup setup = set_up(s, resolution, metal);
   const Profile profile(*setup.body, *s.path);
   std::vector<double> radius;
   for (const double depth : probe_depths(s)) radius.push_back(setup.radius_at(depth));
@@ -117,6 +119,42 @@ double round_interval(double duration) {
   return 10 * power;
 }
 
+/// Tells where a table of a property was held constant because the run went beyond it.
+void remark_beyond(std::vector<std::string>& remarks, const std::string& whose, const base::Table& table, double low,
+                   double high) {
+  if (table.is_constant() || (table.x().front() <= low && table.x().back() >= high)) return;
+  const auto celsius = [](double T) { return std::to_string(std::lround(T - 273.15)); };
+  remarks.push_back(whose + " is known from " + celsius(table.x().front()) + " to " + celsius(table.x().back()) +
+                    " degC and was held constant beyond; the run went from " + celsius(low) + " to " + celsius(high) +
+                    " degC");
+}
+
+/// Assumptions worth telling, judged by the temperatures each layer went through.
+std::vector<std::string> remarks_on(const Section& s, const History& h) {
+  std::vector<std::string> remarks;
+  std::vector<double> low(h.layer_name.size(), 1e300), high(h.layer_name.size(), 0);
+  const std::size_t cells = h.radius.size();
+  for (std::size_t k = 0; k < h.temperature.size(); ++k) {
+    const auto layer = static_cast<std::size_t>(h.layer[k % cells]);
+    low[layer] = std::min(low[layer], h.temperature[k]);
+    high[layer] = std::max(high[layer], h.temperature[k]);
+  }
+  const auto metal = static_cast<std::size_t>(h.layer[static_cast<std::size_t>(h.metal_begin)]);
+  const auto both = [&](const std::string& who, const alloy::PhaseProperties& p, double a, double b) {
+    remark_beyond(remarks, "heat capacity of " + who, p.heat_capacity, a, b);
+    remark_beyond(remarks, "conductivity of " + who, p.conductivity, a, b);
+  };
+  both("solid " + s.alloy, s.metal.solid, std::min(low[metal], s.path->end_of_freezing()), s.path->liquidus());
+  both("liquid " + s.alloy, s.metal.liquid, s.path->end_of_freezing(), std::max(high[metal], s.path->liquidus()));
+  const std::size_t inside = s.inside ? s.inside->layers.size() : 0;
+  for (std::size_t l = 0; l < h.layer_name.size(); ++l) {
+    if (l == metal) continue;
+    const WallLayer& wall = l < metal ? s.inside->layers[inside - 1 - l] : s.outside.layers[l - metal - 1];
+    both(wall.material, wall.properties.body, low[l], high[l]);
+  }
+  return remarks;
+}
+
 /// Half width of the ± of a time: what coarsening by two changed, times a factor. The change is three times the error
 /// left where the order is two, once where it is one; a half covers what lies between with room for chance.
 double numerical_error(double fine, double coarse) {
@@ -135,14 +173,15 @@ Result run(const Section& section, const Progress& progress) {
     for (std::size_t i = 0; wall && i < wall->layers.size(); ++i)
       if (std::optional<int>& cells = wall->layers[i].cells) cells = std::max(2, *cells / 2);
 
+  const std::shared_ptr<const alloy::EnthalpyCurve> metal = metal_curve(section);
   const auto tell = [&](double share) {
     if (progress) progress(share);
   };
   tell(0);
-  const Outcome coarse = march(coarse_section, companion_of(fine), std::nullopt, [](double) {});
+  const Outcome coarse = march(coarse_section, companion_of(fine), metal, std::nullopt, [](double) {});
   const double duration = coarse.end_time;
   const double every = section.record_every.value_or(round_interval(duration));
-  Outcome out = march(section, fine, every, [&](double t) { tell(0.2 + 0.8 * std::min(1.0, t / duration)); });
+  Outcome out = march(section, fine, metal, every, [&](double t) { tell(0.2 + 0.8 * std::min(1.0, t / duration)); });
 
   Result r;
   r.solidification_time = out.frozen;
@@ -161,6 +200,7 @@ Result run(const Section& section, const Progress& progress) {
   }
   r.by_depth = std::move(out.by_depth);
   r.history = std::move(out.history);
+  r.remarks = remarks_on(section, r.history);
   r.cpu_seconds = static_cast<double>(std::clock() - begin) / CLOCKS_PER_SEC;
   tell(1);
   return r;

@@ -173,10 +173,12 @@ void refuse_contact(const Wall& wall) {
 }  // namespace
 
 double rough_freezing_time(const Section& s) {
-  const alloy::EnthalpyCurve metal(s.metal, *s.path, s.path->end_of_freezing() - 100, s.pouring_temperature + 10);
+  const double liquidus = s.path->liquidus();
+  const double stored = s.metal.density * (s.metal.latent_heat + s.metal.liquid.heat_capacity(liquidus) *
+                                                                     (s.pouring_temperature - s.path->end_of_freezing()));
   const int m = static_cast<int>(s.shape);
   const double modulus = s.depth() / (s.inside ? 2 : 1) / (m + 1);
-  const double heat = heat_to_solid(metal, s.pouring_temperature) * modulus;  // per area of wall
+  const double heat = stored * modulus;  // per area of wall
   double rate = 0;
   for (const Wall* wall : {&s.outside, s.inside ? &*s.inside : nullptr}) {
     if (!wall) continue;
@@ -204,7 +206,13 @@ double wall_hardness(const Section& s) {
   return std::log(std::max(outer, inner)) / std::log(kSteepest);
 }
 
-Setup set_up(const Section& s, const Resolution& resolution) {
+std::shared_ptr<const alloy::EnthalpyCurve> metal_curve(const Section& s) {
+  if (!s.path) throw base::InputError("a section needs a solidification path");
+  const TemperatureRange range = temperatures(s);
+  return std::make_shared<const alloy::EnthalpyCurve>(s.metal, *s.path, range.low, range.high);
+}
+
+Setup set_up(const Section& s, const Resolution& resolution, std::shared_ptr<const alloy::EnthalpyCurve> curve) {
   if (!s.path) throw base::InputError("a section needs a solidification path");
   if (!(s.depth() > 0)) throw base::InputError("a section needs a positive thickness");
   if (s.pouring_temperature < s.path->end_of_freezing())
@@ -236,9 +244,8 @@ Setup set_up(const Section& s, const Resolution& resolution) {
     inner_radius = s.shape == heat::Shape::plate ? inner_radius : std::max(0.0, inner_radius);
   }
   const int metal = static_cast<int>(layers.size());
-  const auto curve = std::make_shared<const alloy::EnthalpyCurve>(s.metal, *s.path, range.low, range.high);
   const int metal_cells = s.cells.value_or(resolution.metal_cells);
-  layers.push_back({curve, metal_widths(s, metal_cells, time), {}});
+  layers.push_back({std::move(curve), metal_widths(s, metal_cells, time), {}});
   start.push_back(s.pouring_temperature);
   out.layer_names.push_back(s.alloy);
 

@@ -172,7 +172,7 @@ TEST_CASE("errors of the walls", "[files][case][errors]") {
        "relative to the case"},
       {"plate.yaml", "test sand, dry", "test-binary",
        "case.yaml:12:14: walls.both[1].layer: found 'test-binary', but there is no file test-binary.yaml beside the "
-       "case or in library/molds; known: die, material, test-sand-dry, test-sand-wet"},
+       "case or in library/molds; known: die, test-sand-dry, test-sand-wet"},
       {"plate.yaml", "    - layer", "    - contact: perfect\n    - layer",
        "case.yaml:12:16: walls.both[1].contact: found two contacts in a row; expected a layer between them"},
       {"plate.yaml", "    - film: 10 W/m2/K\n      surroundings: 25 degC\n",

@@ -18,7 +18,7 @@ LAYERS = {
     "freeze": (),
     # Eigen/Core only for its version, which a result file records
     "files": ("yaml-cpp/", "udunits2.h", "hdf5.h", "hdf5_hl.h", "fmt/", "Eigen/Core"),
-    "app": ("CLI/", "spdlog/", "fmt/"),
+    "app": ("CLI/", "nlohmann/", "fmt/"),
 }
 ORDER = list(LAYERS)
 WITHOUT_IO = ORDER[: ORDER.index("files")]  # these take and give plain values
@@ -109,7 +109,7 @@ PLANTED = [  # file, its text, what the breach must say
     ("src/alloy/talk.cpp", "#include <iostream>\n", "layer alloy does no I/O"),
     ("include/palier/freeze/disk.hpp", "\n#include <filesystem>\n", "disk.hpp:2: includes <filesystem>"),
     ("src/freeze/math.cpp", "#include <Eigen/Core>\n", "outside libraries of layer freeze: none"),
-    ("src/heat/log.cpp", "#include <spdlog/spdlog.h>\n", "outside libraries of layer heat: Eigen/"),
+    ("src/heat/log.cpp", "#include <nlohmann/nlohmann.h>\n", "outside libraries of layer heat: Eigen/"),
     ("src/alloy/roots.cpp", "#include <boost/asio.hpp>\n", "outside libraries of layer alloy"),
     ("src/base/disk.cpp", "#include <unistd.h>\n", "outside libraries of layer base"),
     ("src/app/store.cpp", "#include <hdf5.h>\n", "outside libraries of layer app"),

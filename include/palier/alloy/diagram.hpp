@@ -34,6 +34,8 @@ class PhaseDiagram {
   virtual double melting_point() const = 0;                  ///< of the pure base metal [K]
   virtual std::optional<Invariant> invariant() const = 0;    ///< reaction in which the last liquid freezes, if any
   virtual double largest_composition() const = 0;            ///< end of the range of validity [mass %]
+  /// Solid to liquid composition where it is the same at every temperature; rules then have closed forms.
+  virtual std::optional<double> constant_partition() const { return std::nullopt; }
 };
 
 /// Liquidus and solidus of the base metal's side of a binary, as lines.

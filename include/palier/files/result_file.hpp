@@ -10,14 +10,13 @@ namespace palier::files {
 
 /// How a result came about.
 struct Provenance {
-  std::string version;       ///< of palier
-  std::string commit;        ///< git describe, or "unknown"
+  std::string version;  ///< of palier
+  std::string commit;   ///< git describe, or "unknown"
   std::string command_line;
 };
 
-/// Writes `path` aside (`path` + ".partial") and renames it when complete, so that a file under its final name is whole.
-/// The same run gives the same bytes.
-/// Throws base::FileTrouble naming path and cause.
+/// Writes `path` aside (`path` + ".partial") and renames it when complete, so that a file under its final name is
+/// whole. The same run gives the same bytes. Throws base::FileTrouble naming path and cause.
 void write_result(const std::string& path, const CaseFile& input, const freeze::Result& result,
                   const Provenance& provenance);
 

@@ -35,8 +35,12 @@ struct Setup {
   double radius_at(double depth) const { return surface_side > 0 ? surface_radius - depth : surface_radius + depth; }
 };
 
+/// Enthalpy curve of the section's metal over all temperatures the run can meet.
+std::shared_ptr<const alloy::EnthalpyCurve> metal_curve(const Section& section);
+
+/// @param metal the section's metal_curve, made once for all runs of a section
 /// Throws base::InputError where the section contradicts itself.
-Setup set_up(const Section& section, const Resolution& resolution);
+Setup set_up(const Section& section, const Resolution& resolution, std::shared_ptr<const alloy::EnthalpyCurve> metal);
 
 /// How hard the walls take heat: 0 hardly, so that the metal stays level; 1 as a face held at one temperature.
 double wall_hardness(const Section& section);
