@@ -10,7 +10,7 @@
 namespace palier::alloy {
 namespace {
 
-constexpr std::size_t kPieces = 128;         // of a curved zone: cubic, so the error is of order 1e-8 of its range
+constexpr int kPieces = 128;                 // of a curved zone: cubic, so the error is of order 1e-8 of its range
 constexpr std::size_t kNodes = 256;          // of the integration over temperature
 constexpr double kBoilingPoint = 373.15;     // [K] water at 1 atm; CRC Handbook of Chemistry and Physics
 constexpr double kHeatOfBoiling = 2.257e6;   // [J/kg] water at 100 degC; CRC Handbook of Chemistry and Physics
@@ -106,14 +106,14 @@ class EnthalpyCurve::Builder {
 
   void region(const Region& r) {
     const RegionEnthalpy enthalpy(r);
-    const std::size_t n = r.linear ? 1 : kPieces;
-    const double spacing = enthalpy.rise() / static_cast<double>(n);
+    const int n = r.linear ? 1 : kPieces;
+    const double spacing = enthalpy.rise() / n;
     if (c_.zones_.empty()) extension(r.low, r);
     c_.zones_.push_back({H_, 1 / spacing, c_.theta_.size(), n});
     double T0 = r.low;
     double slope0 = temperature_slope(r, T0);
-    for (std::size_t i = 0; i < n; ++i) {
-      const double T1 = i + 1 == n ? r.high : enthalpy.temperature(spacing * static_cast<double>(i + 1));
+    for (int i = 0; i < n; ++i) {
+      const double T1 = i + 1 == n ? r.high : enthalpy.temperature(spacing * (i + 1));
       const double slope1 = temperature_slope(r, T1);
       const double k0 = r.conductivity(T0), k1 = r.conductivity(T1);
       const double theta1 = theta_at_ + integrate(r.conductivity, T0, T1);
@@ -234,16 +234,16 @@ EnthalpyCurve::EnthalpyCurve(const MoldProperties& mold, double low, double high
   }
   build.region(r);
   build.extension(high, r);
+  straight_ = r.linear && arrests_.empty();
 }
 
 const EnthalpyCurve::Ends& EnthalpyCurve::ends(double H, double& u, double& per_spacing) const {
   const Zone& z = zone(H);
   const double x = (H - z.begin) * z.per_spacing;
-  std::size_t i = x > 0 ? static_cast<std::size_t>(x) : 0;
-  if (i >= z.pieces) i = z.pieces - 1;
-  u = x - static_cast<double>(i);
+  const int i = std::clamp(static_cast<int>(x), 0, z.pieces - 1);
+  u = x - i;
   per_spacing = z.per_spacing;
-  return ends_[z.first + i];
+  return ends_[z.first + static_cast<std::size_t>(i)];
 }
 
 double EnthalpyCurve::temperature(double H) const {

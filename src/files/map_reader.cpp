@@ -21,7 +21,7 @@ std::string unknown_key_hint(const FileKeys& file, const KeyTable& table, const 
     if (other.find(key) != nullptr) homes.push_back(other.where.empty() ? "the top level" : other.where);
     for (const std::string& name : other.names()) elsewhere.push_back(name);
   }
-  const std::string here = did_you_mean(key, table.names());
+  std::string here = did_you_mean(key, table.names());
   if (!homes.empty()) return fmt::format("'{}' belongs under {}", key, one_of(homes));
   if (!here.empty()) return here;
   const auto near = nearest_names(key, elsewhere, 1);

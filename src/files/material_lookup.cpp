@@ -55,7 +55,7 @@ bool ends_in_yaml(const std::string& name) {
 
 std::string unknown_name_hint(const std::string& name, std::vector<std::string> known) {
   const std::string file = material_file_name(name);
-  const std::string near = did_you_mean(file.substr(0, file.rfind('.')), known, 3);
+  std::string near = did_you_mean(file.substr(0, file.rfind('.')), known, 3);
   if (!near.empty()) return near;
   return known.empty() ? "no such file is there at all" : fmt::format("known: {}", fmt::join(known, ", "));
 }

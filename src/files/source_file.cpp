@@ -29,7 +29,7 @@ std::string read_bytes(const fs::path& path, const std::string& what) {
   if (!stream)
     throw base::FileTrouble(fmt::format("{}: cannot read the {}: {}", path.string(), what, std::strerror(errno)));
   // One block past the limit is enough for the check of the size to refuse the file.
-  std::string text, block(64 * 1024, '\0');
+  std::string text, block(65'536, '\0');
   while (stream && text.size() <= SourceLimits::bytes) {
     stream.read(block.data(), static_cast<std::streamsize>(block.size()));
     text.append(block, 0, static_cast<std::size_t>(stream.gcount()));

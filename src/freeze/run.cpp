@@ -122,7 +122,8 @@ double round_interval(double duration) {
 /// Tells where a table of a property was held constant because the run went beyond it.
 void remark_beyond(std::vector<std::string>& remarks, const std::string& whose, const base::Table& table, double low,
                    double high) {
-  if (table.is_constant() || (table.x().front() <= low && table.x().back() >= high)) return;
+  constexpr double kWorthTelling = 1;  // [K]
+  if (table.is_constant() || (table.x().front() <= low + kWorthTelling && table.x().back() >= high - kWorthTelling)) return;
   const auto celsius = [](double T) { return std::to_string(std::lround(T - 273.15)); };
   remarks.push_back(whose + " is known from " + celsius(table.x().front()) + " to " + celsius(table.x().back()) +
                     " degC and was held constant beyond; the run went from " + celsius(low) + " to " + celsius(high) +

@@ -1,5 +1,6 @@
 #include "palier/freeze/watch.hpp"
 
+#include <array>
 #include <cmath>
 #include <limits>
 
@@ -39,7 +40,8 @@ Watch::Watch(const Profile& profile, const std::vector<double>& radius)
       started_(radius.size(), 0),
       ended_(radius.size(), 0),
       frozen_(kNever),
-      last_radius_(kNever) {
+      last_radius_(kNever),
+      met_radius_(kNever) {
   for (const double r : radius) points_.push_back(profile.point(r));
 }
 
@@ -73,6 +75,10 @@ void Watch::look(const heat::StepView& step) {
 
 void Watch::look_at_whole(const heat::StepView& step) {
   const heat::LayerCells cells = profile_.cells();
+  if (step.before().fronts[0].count == 2 && step.after().fronts[0].count < 2) {
+    const std::array<double, 2>& radius = step.before().marks[0].front_radius;
+    met_radius_ = 0.5 * (radius[0] + radius[1]);
+  }
   int last = -1;
   double latest = 0;
   for (int i = cells.begin; i < cells.end; ++i) {
@@ -94,7 +100,8 @@ void Watch::look_at_whole(const heat::StepView& step) {
   frozen_ = latest;
   const heat::Body& body = step.body();
   const bool at_center = last == 0 && body.inner().kind == heat::Boundary::Kind::adiabatic;
-  last_radius_ = at_center ? body.face()[0] : body.center()[static_cast<std::size_t>(last)];
+  const bool met_here = std::isfinite(met_radius_) && profile_.point(met_radius_).cell == last;
+  last_radius_ = at_center ? body.face()[0] : met_here ? met_radius_ : body.center()[static_cast<std::size_t>(last)];
 }
 
 }  // namespace palier::freeze

@@ -28,7 +28,17 @@ void FlowField<Real>::evaluate(const Real& time, const std::vector<Real>& unknow
     for (int layer = 0; layer < b.layers(); ++layer) {
       const alloy::EnthalpyCurve& curve = b.curve(layer);
       const auto end = static_cast<std::size_t>(b.layer_cells(layer).end);
-      for (auto i = static_cast<std::size_t>(b.layer_cells(layer).begin); i < end; ++i)
+      const auto begin = static_cast<std::size_t>(b.layer_cells(layer).begin);
+      if (curve.is_straight()) {
+        double origin = 0, slope = 0;
+        curve.potential(0, origin, slope);
+        for (auto i = begin; i < end; ++i) {
+          lane(theta_[i], l) = origin + slope * lane(unknown[i], l);
+          lane(theta_slope_[i], l) = slope;
+        }
+        continue;
+      }
+      for (auto i = begin; i < end; ++i)
         curve.potential(lane(unknown[i], l), lane(theta_[i], l), lane(theta_slope_[i], l));
     }
     const Fronts& of_lane = fronts[static_cast<std::size_t>(l)];

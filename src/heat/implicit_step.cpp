@@ -14,9 +14,6 @@ namespace {
 
 constexpr int kMostIterations = 14;
 constexpr double kPastKink = 1e-12;     // relative; a cell stopped at a kink lands just on its far side
-constexpr double kHandBack = -0.35;     // solid share at which a receding front goes back; far from 0, lest it flutter
-constexpr double kAdoptFrom = 0.45;     // solid share from which a cell's front is followed: near one half the flows of
-                                        // a cell with and without a front inside agree
 
 const double kGamma = 2 - std::sqrt(2.0);
 const double kDiagonal = kGamma / 2;         // weight of the stage itself
@@ -31,11 +28,11 @@ double ImplicitStep<Real>::gamma() {
 
 template <class Real>
 ImplicitStep<Real>::ImplicitStep(const Bodies<Real>& bodies, std::vector<Real> scale)
-    : field_(bodies), scale_(std::move(scale)), matrix_(scale_.size()) {
+    : field_(bodies), passage_(field_), scale_(std::move(scale)), matrix_(scale_.size()) {
   const std::size_t n = scale_.size();
   inverse_scale_.assign(n, all_lanes<Real>(0));
-  inverse_volume_ = unknown_ = base_ = change_ = middle_unknown_ = rate_ = inverse_scale_;
-  weight_ = all_lanes<Real>(0);
+  inverse_volume_ = change_ = middle_unknown_ = rate_ = stage_.unknown = stage_.base = inverse_scale_;
+  stage_.weight = all_lanes<Real>(0);
   middle_flow_.assign(n + 1, all_lanes<Real>(0));
   metal_heat_.assign(lane_count<Real>, 0.0);
   for (std::size_t i = 0; i < n; ++i) inverse_scale_[i] = 1.0 / scale_[i];
@@ -52,8 +49,8 @@ ImplicitStep<Real>::ImplicitStep(const Bodies<Real>& bodies, std::vector<Real> s
 template <class Real>
 State<Real> ImplicitStep<Real>::start(const std::vector<Real>& enthalpy, const Real& time) {
   State<Real> s;
-  s.enthalpy = s.unknown = unknown_ = enthalpy;
-  fronts_ = s.fronts;
+  s.enthalpy = s.unknown = stage_.unknown = enthalpy;
+  stage_.fronts = s.fronts;
   field_.evaluate(time, s.unknown, s.fronts);
   s.flow = field_.flow();
   for (int l = 0; l < lane_count<Real>; ++l) s.marks[static_cast<std::size_t>(l)] = marks(l);
@@ -66,37 +63,37 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
   const std::size_t n = scale_.size();
   const Real weight = kDiagonal * length;
   StepReport report;
-  weight_ = weight;
+  stage_.weight = weight;
   for (int l = 0; l < lane_count<Real>; ++l)
-    for (const int side : {-1, +1}) note_solid_gain(l, side, from);
+    for (const int side : {-1, +1}) passage_.note_solid_gain(l, side, from);
 
   // First stage, trapezoidal rule to time + gamma * length.
-  for (std::size_t i = 0; i < n; ++i) base_[i] = from.enthalpy[i] + weight * gain(from.flow, i);
-  fronts_ = from.fronts;
-  unknown_ = from.unknown;
+  for (std::size_t i = 0; i < n; ++i) stage_.base[i] = from.enthalpy[i] + weight * gain(from.flow, i);
+  stage_.fronts = from.fronts;
+  stage_.unknown = from.unknown;
   predict(rate_, time, Real(kGamma * length));
   if (!solve_stage(time + kGamma * length, weight, newton_tolerance, report)) return report;
   middle_flow_ = field_.flow();
-  middle_unknown_ = unknown_;
-  const LaneFronts<Real> middle_fronts = fronts_;
+  middle_unknown_ = stage_.unknown;
+  const LaneFronts<Real> middle_fronts = stage_.fronts;
   for (int l = 0; l < lane_count<Real>; ++l) middle_marks_[static_cast<std::size_t>(l)] = marks(l);
 
   // Second stage, backward differentiation to time + length.
   const Real share = kWeight * length;
   for (std::size_t i = 0; i < n; ++i)
-    base_[i] = from.enthalpy[i] + share * (gain(from.flow, i) + gain(middle_flow_, i));
+    stage_.base[i] = from.enthalpy[i] + share * (gain(from.flow, i) + gain(middle_flow_, i));
   for (int l = 0; l < lane_count<Real>; ++l)
-    for (const int side : {-1, +1}) pass_on_debts(l, side, from.fronts[static_cast<std::size_t>(l)]);
+    for (const int side : {-1, +1}) passage_.pass_on_debts(stage_, l, side, from.fronts[static_cast<std::size_t>(l)]);
   set_rate(from.unknown, from.fronts, Real(kGamma * length));
   predict(rate_, time, Real((1 - kGamma) * length));
   if (!solve_stage(time + length, weight, newton_tolerance, report)) return report;
 
   to.flow = field_.flow();
-  to.unknown = unknown_;
-  to.fronts = fronts_;
+  to.unknown = stage_.unknown;
+  to.fronts = stage_.fronts;
   for (std::size_t i = 0; i < n; ++i) {
     const Real last = gain(to.flow, i);
-    to.enthalpy[i] = base_[i] + weight * last;
+    to.enthalpy[i] = stage_.base[i] + weight * last;
     // Embedded third-order weights (1-w)/3, (3w+1)/3, d/3 against w, w, d.
     change_[i] = length * ((4 * kWeight - 1) / 3 * gain(from.flow, i) - gain(middle_flow_, i) / 3.0 +
                            2 * kDiagonal / 3 * last);
@@ -116,7 +113,7 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
       const int last = last_swept(l, *before, from.fronts[static_cast<std::size_t>(l)]);
       share_error(l, before->cell, last);
     }
-  if (getenv("DBG") && fronts_[0].count) { int j=fronts_[0].front[0].cell; printf("   h %.3g:", lane(length,0)); for(int c=j-1;c<=j+3;++c) printf(" c%d f %.5g %.5g %.5g |",c, lane(gain(from.flow,c),0)/lane(scale_[c],0), lane(gain(middle_flow_,c),0)/lane(scale_[c],0), lane(gain(to.flow,c),0)/lane(scale_[c],0)); puts(""); }
+  if (getenv("DBG") && stage_.fronts[0].count) { int j=stage_.fronts[0].front[0].cell; printf("   h %.3g:", lane(length,0)); for(int c=j-1;c<=j+3;++c) printf(" c%d f %.5g %.5g %.5g |",c, lane(gain(from.flow,c),0)/lane(scale_[c],0), lane(gain(middle_flow_,c),0)/lane(scale_[c],0), lane(gain(to.flow,c),0)/lane(scale_[c],0)); puts(""); }
   // Damped by the step's own operator, or stiff cells would make the estimate meaningless.
   assemble(weight);
   matrix_.solve(change_);
@@ -129,7 +126,7 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
 /// other front if that lives or lived.
 template <class Real>
 int ImplicitStep<Real>::last_swept(int l, const Front& before, const Fronts& all_before) const {
-  const Fronts& now = fronts_[static_cast<std::size_t>(l)];
+  const Fronts& now = stage_.fronts[static_cast<std::size_t>(l)];
   const int side = before.solid_side;
   if (const Front* still = now.with_solid_side(side)) return still->cell;
   if (const Front* other = now.with_solid_side(-side)) return other->cell + side;
@@ -177,9 +174,9 @@ void ImplicitStep<Real>::predict(const std::vector<Real>& rate, const Real& time
 template <class Real>
 void ImplicitStep<Real>::set_rate(const std::vector<Real>& before, const LaneFronts<Real>& fronts_before,
                                   const Real& length) {
-  for (std::size_t i = 0; i < rate_.size(); ++i) rate_[i] = (unknown_[i] - before[i]) / length;
+  for (std::size_t i = 0; i < rate_.size(); ++i) rate_[i] = (stage_.unknown[i] - before[i]) / length;
   for (int l = 0; l < lane_count<Real>; ++l) {
-    const Fronts &then = fronts_before[static_cast<std::size_t>(l)], &now = fronts_[static_cast<std::size_t>(l)];
+    const Fronts &then = fronts_before[static_cast<std::size_t>(l)], &now = stage_.fronts[static_cast<std::size_t>(l)];
     for (const Fronts* some : {&then, &now})
       for (int k = 0; k < some->count; ++k) {
         const int cell = some->front[static_cast<std::size_t>(k)].cell;
@@ -193,11 +190,11 @@ Marks ImplicitStep<Real>::marks(int l) const {
   Marks m;
   m.inner_surface = field_.inner_surface(l);
   m.outer_surface = field_.outer_surface(l);
-  const Fronts& fronts = fronts_[static_cast<std::size_t>(l)];
+  const Fronts& fronts = stage_.fronts[static_cast<std::size_t>(l)];
   for (int k = 0; k < fronts.count; ++k) {
     const Front& f = fronts.front[static_cast<std::size_t>(k)];
     m.front_radius[f.solid_side > 0 ? 1 : 0] =
-        place(field_.body(l), field_.arrest(l), f, lane(unknown_[static_cast<std::size_t>(f.cell)], l)).radius;
+        place(field_.body(l), field_.arrest(l), f, lane(stage_.unknown[static_cast<std::size_t>(f.cell)], l)).radius;
   }
   return m;
 }
@@ -211,7 +208,7 @@ double ImplicitStep<Real>::heat_out(int l, const State<Real>& from, const State<
 template <class Real>
 bool ImplicitStep<Real>::solve_stage(const Real& time, const Real& weight, double tolerance, StepReport& report) {
   for (int iteration = 0;; ++iteration) {
-    field_.evaluate(time, unknown_, fronts_);
+    field_.evaluate(time, stage_.unknown, stage_.fronts);
     ++report.iterations;
     report.residual = residual(weight, report.worst_cell);
     if (report.residual <= tolerance) return true;
@@ -229,19 +226,18 @@ bool ImplicitStep<Real>::solve_stage(const Real& time, const Real& weight, doubl
 template <class Real>
 double ImplicitStep<Real>::residual(const Real& weight, int& worst) {
   const std::size_t n = change_.size();
-  for (std::size_t i = 0; i < n; ++i) change_[i] = base_[i] - unknown_[i] + weight * gain(field_.flow(), i);
+  for (std::size_t i = 0; i < n; ++i) change_[i] = stage_.base[i] - stage_.unknown[i] + weight * gain(field_.flow(), i);
   double largest = 0;
   for (int l = 0; l < lane_count<Real>; ++l) {
-    const Fronts& fronts = fronts_[static_cast<std::size_t>(l)];
+    const Fronts& fronts = stage_.fronts[static_cast<std::size_t>(l)];
     for (int k = 0; k < fronts.count; ++k)
       lane(change_[static_cast<std::size_t>(fronts.front[static_cast<std::size_t>(k)].cell)], l) -=
           field_.excess(l, k).excess;
     for (std::size_t i = 0; i < n; ++i) {
       const double r = std::abs(lane(change_[i], l) * lane(inverse_scale_[i], l));
-      if (!(r <= largest)) {
-        largest = r;
-        worst = static_cast<int>(i);
-      }
+      if (r <= largest) continue;  // so written that a NaN is not passed over
+      largest = r;
+      worst = static_cast<int>(i);
     }
   }
   return largest;
@@ -259,7 +255,7 @@ void ImplicitStep<Real>::assemble(const Real& weight) {
     matrix_.upper[i] = s * outer[i + 1];
   }
   for (int l = 0; l < lane_count<Real>; ++l) {
-    const Fronts& fronts = fronts_[static_cast<std::size_t>(l)];
+    const Fronts& fronts = stage_.fronts[static_cast<std::size_t>(l)];
     for (int k = 0; k < fronts.count; ++k) {
       const auto j = static_cast<std::size_t>(fronts.front[static_cast<std::size_t>(k)].cell);
       const FrontExcess& e = field_.excess(l, k);
@@ -276,12 +272,17 @@ template <class Real>
 void ImplicitStep<Real>::move(const Real& time) {
   for (int l = 0; l < lane_count<Real>; ++l) {
     const Body& b = field_.body(l);
-    const Fronts before = fronts_[static_cast<std::size_t>(l)];
+    const Fronts before = stage_.fronts[static_cast<std::size_t>(l)];
     for (int layer = 0; layer < b.layers(); ++layer) {
       const std::vector<double>& kinks = b.curve(layer).kinks();
+      if (kinks.empty()) {
+        for (int i = b.layer_cells(layer).begin; i < b.layer_cells(layer).end; ++i)
+          lane(stage_.unknown[static_cast<std::size_t>(i)], l) += lane(change_[static_cast<std::size_t>(i)], l);
+        continue;
+      }
       for (int i = b.layer_cells(layer).begin; i < b.layer_cells(layer).end; ++i) {
         const auto c = static_cast<std::size_t>(i);
-        double& u = lane(unknown_[c], l);
+        double& u = lane(stage_.unknown[c], l);
         const double step = lane(change_[c], l);
         if (before.count > 0 && before.in_cell(i)) continue;
         double next = u + step;
@@ -298,139 +299,8 @@ void ImplicitStep<Real>::move(const Real& time) {
     }
     for (int k = 0; k < before.count; ++k) {
       const Front& f = before.front[static_cast<std::size_t>(k)];
-      if (fronts_[static_cast<std::size_t>(l)].in_cell(f.cell))
-        move_front(l, k, lane(change_[static_cast<std::size_t>(f.cell)], l), lane(time, l));
-    }
-  }
-}
-
-template <class Real>
-void ImplicitStep<Real>::move_front(int l, int number, double change, double time) {
-  const Front f = fronts_[static_cast<std::size_t>(l)].front[static_cast<std::size_t>(number)];
-  const LastArrest& arrest = field_.arrest(l);
-  double& u = lane(unknown_[static_cast<std::size_t>(f.cell)], l);
-  const double latent = arrest.hot - arrest.cold;
-  u += change;
-  if (u < arrest.cold) {
-    u = arrest.cold;
-    hand_over(l, f, time);
-  } else if ((arrest.hot - u) / latent < kHandBack) {
-    u = arrest.hot - kHandBack * latent;
-    hand_back(l, f, time);
-  }
-}
-
-/// The cell is solid: the front goes on into the next one, or ends where there is none, or meets the other front.
-template <class Real>
-void ImplicitStep<Real>::hand_over(int l, const Front& f, double time) {
-  Fronts& fronts = fronts_[static_cast<std::size_t>(l)];
-  const LastArrest& arrest = field_.arrest(l);
-  const LayerCells metal = field_.body(l).metal_cells();
-  double& u = lane(unknown_[static_cast<std::size_t>(f.cell)], l);
-  u = arrest.cold + field_.excess_of(l, f, arrest.cold, time, unknown_, fronts).excess;
-  fronts.remove(f.cell);
-  const int next = f.cell - f.solid_side;
-  if (next < metal.begin || next >= metal.end) return;
-  double& next_unknown = lane(unknown_[static_cast<std::size_t>(next)], l);
-  if (const Front* met = fronts.in_cell(next)) {
-    const Front other = *met;
-    next_unknown += field_.excess_of(l, other, next_unknown, time, unknown_, fronts).excess;
-    fronts.remove(next);
-    return;
-  }
-  pass_on_debt(l, f.cell, next, f.solid_side);
-  const Front ahead{next, f.solid_side};
-  const double enthalpy = next_unknown;
-  double guess = std::clamp(enthalpy, arrest.cold, arrest.hot);
-  for (int i = 0; i < 3; ++i) {
-    guess = enthalpy - field_.excess_of(l, ahead, guess, time, unknown_, fronts).excess;
-    guess = std::clamp(guess, arrest.cold, arrest.hot - 0.9 * kHandBack * (arrest.hot - arrest.cold));
-  }
-  next_unknown = guess;
-  fronts.add(ahead);
-}
-
-/// What the solid just behind a front gains per volume and time as the step begins.
-template <class Real>
-void ImplicitStep<Real>::note_solid_gain(int l, int side, const State<Real>& from) {
-  double& noted = solid_gain_[static_cast<std::size_t>(l)][side > 0 ? 1 : 0];
-  noted = 0;
-  const Front* front = from.fronts[static_cast<std::size_t>(l)].with_solid_side(side);
-  if (!front) return;
-  const LayerCells metal = field_.body(l).metal_cells();
-  const int solid = front->cell + side;
-  if (solid >= metal.begin && solid < metal.end)
-    noted = lane(gain(from.flow, static_cast<std::size_t>(solid)), l);
-}
-
-/// A cell that froze within the stage: the explicit part of the stage still took its latent heat for the whole length, or
-/// not yet all of it. What it took too much or too little is the next cell's, so it is passed on through the base of the
-/// stage; left where it is, it would come back as a flow between the two that the step must not believe in. The sum stays.
-template <class Real>
-void ImplicitStep<Real>::pass_on_debt(int l, int cell, int next, int side) {
-  const auto c = static_cast<std::size_t>(cell), n = static_cast<std::size_t>(next);
-  const std::vector<double>& volume = field_.body(l).volume();
-  const double due = lane(unknown_[c], l) -
-                     lane(weight_, l) * solid_gain_[static_cast<std::size_t>(l)][side > 0 ? 1 : 0];
-  lane(base_[n], l) += (lane(base_[c], l) - due) * volume[c] / volume[n];
-  lane(base_[c], l) = due;
-}
-
-/// For all cells that froze before the stage under way begins.
-template <class Real>
-void ImplicitStep<Real>::pass_on_debts(int l, int side, const Fronts& before) {
-  const Front *then = before.with_solid_side(side), *now = fronts_[static_cast<std::size_t>(l)].with_solid_side(side);
-  if (!then || !now) return;
-  for (int cell = then->cell; (cell - now->cell) * side > 0; cell -= side) pass_on_debt(l, cell, cell - side, side);
-}
-
-/// The front has melted its way out of the cell on the solid side.
-template <class Real>
-void ImplicitStep<Real>::hand_back(int l, const Front& f, double time) {
-  Fronts& fronts = fronts_[static_cast<std::size_t>(l)];
-  const LastArrest& arrest = field_.arrest(l);
-  const LayerCells metal = field_.body(l).metal_cells();
-  double& u = lane(unknown_[static_cast<std::size_t>(f.cell)], l);
-  u = std::max(arrest.hot, u + field_.excess_of(l, f, u, time, unknown_, fronts).excess);
-  fronts.remove(f.cell);
-  const int back = f.cell + f.solid_side;
-  if (back < metal.begin || back >= metal.end || fronts.in_cell(back)) return;
-  fronts.add({back, f.solid_side});
-  lane(unknown_[static_cast<std::size_t>(back)], l) = arrest.cold + 0.3 * (arrest.hot - arrest.cold);
-}
-
-template <class Real>
-void ImplicitStep<Real>::adopt_fronts(State<Real>& state, const Real& time) {
-  for (int l = 0; l < lane_count<Real>; ++l) {
-    const LastArrest& arrest = field_.arrest(l);
-    if (!arrest.exists) continue;
-    Fronts& fronts = state.fronts[static_cast<std::size_t>(l)];
-    const LayerCells metal = field_.body(l).metal_cells();
-    for (const int side : {+1, -1}) {
-      if (fronts.with_solid_side(side)) continue;
-      // The first cell from this side that is not solid; all behind it must be.
-      int cell = side > 0 ? metal.end - 1 : metal.begin;
-      while (cell >= metal.begin && cell < metal.end &&
-             lane(state.unknown[static_cast<std::size_t>(cell)], l) < arrest.cold && !fronts.in_cell(cell))
-        cell -= side;
-      if (cell < metal.begin || cell >= metal.end || fronts.in_cell(cell)) continue;
-      const double H = lane(state.unknown[static_cast<std::size_t>(cell)], l);
-      const double share = (arrest.hot - H) / (arrest.hot - arrest.cold);
-      const int ahead = cell - side;
-      const bool liquid_ahead = ahead < metal.begin || ahead >= metal.end ||
-                                lane(state.unknown[static_cast<std::size_t>(ahead)], l) >= arrest.hot;
-      const bool cooled = side * lane(state.flow[static_cast<std::size_t>(side > 0 ? cell + 1 : cell)], l) > 0;
-      if (share < kAdoptFrom || share > 1 || !liquid_ahead || !cooled) continue;
-      const Front front{cell, side};
-      double guess = H;
-      for (int i = 0; i < 5; ++i)
-        guess = std::clamp(H - field_.excess_of(l, front, guess, lane(time, l), state.unknown, fronts).excess,
-                           arrest.cold, arrest.hot);
-      if (guess <= arrest.cold || guess >= arrest.hot) continue;
-      lane(state.unknown[static_cast<std::size_t>(cell)], l) = guess;
-      fronts.add(front);
-      state.marks[static_cast<std::size_t>(l)].front_radius[side > 0 ? 1 : 0] =
-          place(field_.body(l), arrest, front, guess).radius;
+      if (stage_.fronts[static_cast<std::size_t>(l)].in_cell(f.cell))
+        passage_.move(stage_, l, f, lane(change_[static_cast<std::size_t>(f.cell)], l), lane(time, l));
     }
   }
 }

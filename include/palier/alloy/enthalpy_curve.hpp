@@ -1,6 +1,7 @@
 // Temperature and conduction potential as functions of volumetric enthalpy, for metals and mold materials alike.
 #pragma once
 
+#include <algorithm>
 #include <array>
 #include <cstddef>
 #include <vector>
@@ -58,13 +59,15 @@ class EnthalpyCurve {
   void potential(double H, double& theta, double& slope) const {
     const Zone& z = zone(H);
     const double x = (H - z.begin) * z.per_spacing;
-    std::size_t i = x > 0 ? static_cast<std::size_t>(x) : 0;
-    if (i >= z.pieces) i = z.pieces - 1;
-    const double u = x - static_cast<double>(i);
-    const std::array<double, 4>& c = theta_[z.first + i];
+    // Through int, which the processor converts in one instruction each way.
+    const int i = std::clamp(static_cast<int>(x), 0, z.pieces - 1);
+    const double u = x - i;
+    const std::array<double, 4>& c = theta_[z.first + static_cast<std::size_t>(i)];
     theta = c[0] + u * (c[1] + u * (c[2] + u * c[3]));
     slope = (c[1] + u * (2 * c[2] + 3 * u * c[3])) * z.per_spacing;
   }
+  /// Constant properties and no arrest: potential(H) is straight.
+  bool is_straight() const { return straight_; }
   double temperature(double H) const;        ///< [K]
   double temperature_slope(double H) const;  ///< dT/dH [K m3/J]; 0 in an arrest
   double conductivity(double H) const;       ///< [W/m/K]
@@ -88,7 +91,7 @@ class EnthalpyCurve {
     double begin;        ///< [J/m3]
     double per_spacing;  ///< 1 / spacing of the pieces
     std::size_t first;   ///< index of its first piece
-    std::size_t pieces;
+    int pieces;
   };
   /// Values at the two ends of a piece that are read off the hot path.
   struct Ends {
@@ -105,6 +108,7 @@ class EnthalpyCurve {
   }
   const Ends& ends(double H, double& u, double& per_spacing) const;
 
+  bool straight_ = false;
   std::vector<Zone> zones_;
   std::vector<std::array<double, 4>> theta_;
   std::vector<Ends> ends_;

@@ -30,8 +30,8 @@ class Watch {
   std::vector<Point> points_;
   std::vector<double> start_, end_;
   std::vector<char> started_, ended_;
-  bool fresh_ = true;
   double frozen_, last_radius_;
+  double met_radius_;  ///< where two fronts met [m]
 };
 
 }  // namespace palier::freeze

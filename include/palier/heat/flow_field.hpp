@@ -8,16 +8,13 @@
 #include "palier/heat/body.hpp"
 #include "palier/heat/face_flow.hpp"
 #include "palier/heat/front.hpp"
+#include "palier/heat/state.hpp"
 
 namespace palier::heat {
 
 /// Bodies of all lanes; they have the same number of cells in each layer.
 template <class Real>
 using Bodies = std::array<const Body*, base::lane_count<Real>>;
-
-/// Fronts of all lanes.
-template <class Real>
-using LaneFronts = std::array<Fronts, base::lane_count<Real>>;
 
 /// What a cell with a front holds beyond its latent enthalpy: its solid part is colder, its liquid part hotter than the
 /// arrest. Both are taken as straight profiles from the front to the cell's face.

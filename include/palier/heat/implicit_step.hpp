@@ -1,31 +1,14 @@
 // One implicit step of the heat equation: TR-BDF2 with Newton on the enthalpy, written once over a number type.
 #pragma once
 
-#include <limits>
 #include <vector>
 
 #include "palier/heat/flow_field.hpp"
+#include "palier/heat/front_passage.hpp"
+#include "palier/heat/state.hpp"
 #include "palier/heat/tridiagonal.hpp"
 
 namespace palier::heat {
-
-/// What is worth interpolating within a step besides enthalpies.
-struct Marks {
-  double inner_surface = 0, outer_surface = 0;  ///< temperature of the metal's faces [K]
-  /// Radius of the front with its solid side at the smaller (0) and at the larger radius (1) [m]; NaN: none.
-  std::array<double, 2> front_radius{std::numeric_limits<double>::quiet_NaN(),
-                                     std::numeric_limits<double>::quiet_NaN()};
-};
-
-/// State of all lanes at one time each.
-template <class Real>
-struct State {
-  std::vector<Real> enthalpy;  ///< of each cell [J/m3]
-  std::vector<Real> unknown;   ///< the same but where a front lies in the cell: its latent enthalpy
-  std::vector<Real> flow;      ///< toward larger radius through each face [W]
-  LaneFronts<Real> fronts;
-  std::array<Marks, base::lane_count<Real>> marks;
-};
 
 /// How a step went. A stalled step must be tried again with a shorter length.
 struct StepReport {
@@ -48,6 +31,9 @@ class ImplicitStep {
   /// @param scale heat scale of each cell [J/m3]: errors are measured against it
   ImplicitStep(const Bodies<Real>& bodies, std::vector<Real> scale);
 
+  ImplicitStep(const ImplicitStep&) = delete;  // its parts refer to each other
+  ImplicitStep& operator=(const ImplicitStep&) = delete;
+
   /// A state from enthalpies; no fronts yet.
   State<Real> start(const std::vector<Real>& enthalpy, const Real& time);
 
@@ -63,25 +49,19 @@ class ImplicitStep {
   double heat_out(int lane, const State<Real>& from, const State<Real>& to, double length) const;
   static double gamma();
 
-  /// Looks for fronts to follow from now on: a cell half frozen between a solid side and a liquid side.
-  void adopt_fronts(State<Real>& state, const Real& time);
+  /// Looks for fronts to follow from now on.
+  void adopt_fronts(State<Real>& state, const Real& time) { passage_.adopt(state, time); }
 
  private:
   bool solve_stage(const Real& time, const Real& weight, double tolerance, StepReport& report);
   double residual(const Real& weight, int& worst);
   void assemble(const Real& weight);
   void move(const Real& time);
-  void move_front(int lane, int number, double change, double time);
-  void hand_over(int lane, const Front& front, double time);
-  void hand_back(int lane, const Front& front, double time);
   void predict(const std::vector<Real>& rate, const Real& time, const Real& length);
   void set_rate(const std::vector<Real>& before, const LaneFronts<Real>& fronts_before, const Real& length);
   Marks marks(int lane) const;
   int last_swept(int lane, const Front& before, const Fronts& all_before) const;
   void share_error(int lane, int first, int last);
-  void note_solid_gain(int lane, int side, const State<Real>& from);
-  void pass_on_debt(int lane, int cell, int next, int side);
-  void pass_on_debts(int lane, int side, const Fronts& before);
   double error_norm(int lane) const;
   /// Divergence of flow: what a cell gains per time and volume.
   Real gain(const std::vector<Real>& flow, std::size_t cell) const {
@@ -89,15 +69,14 @@ class ImplicitStep {
   }
 
   FlowField<Real> field_;
+  FrontPassage<Real> passage_;
   std::vector<Real> scale_, inverse_scale_, inverse_volume_;
   std::vector<double> metal_heat_;  ///< sum of volume times scale over the metal, per lane
   // Of the step under way:
-  std::vector<Real> unknown_, base_, change_, middle_flow_, middle_unknown_, rate_;
-  LaneFronts<Real> fronts_;
+  Stage<Real> stage_;
+  std::vector<Real> change_, middle_flow_, middle_unknown_, rate_;
   std::array<Marks, base::lane_count<Real>> middle_marks_;
   Tridiagonal<Real> matrix_;
-  Real weight_;  ///< of the implicit part of a stage [s]
-  std::array<std::array<double, 2>, base::lane_count<Real>> solid_gain_{};
 };
 
 }  // namespace palier::heat
