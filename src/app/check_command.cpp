@@ -16,7 +16,11 @@ void print(const std::vector<files::ResolvedValue>& values) {
     key = std::max(key, v.key.size());
     value = std::max(value, std::min<std::size_t>(v.value.size(), 36));
   }
-  for (const files::ResolvedValue& v : values) fmt::print("  {:<{}}  {:<{}}  {}\n", v.key, key, v.value, value, v.from);
+  for (const files::ResolvedValue& v : values) {
+    std::string line = fmt::format("  {:<{}}  {:<{}}  {}", v.key, key, v.value, value, v.from);
+    std::replace(line.begin(), line.end(), '\n', ' ');  // free text keeps to one line
+    fmt::print("{}\n", line);
+  }
 }
 
 }  // namespace

@@ -17,11 +17,12 @@
 namespace palier::app {
 namespace {
 
-/// Words of the command line that start no option and no known command, with the nearest command; empty if there is none.
-std::string misspelt_command(const CLI::App& program, int argc, char** argv) {
-  if (argc < 2 || argv[1][0] == '-') return {};
+/// What is wrong with the first word of the command line; empty where it is an option or a command.
+std::string wrong_command(const CLI::App& program, int argc, char** argv) {
   std::vector<std::string> names;
   for (const CLI::App* command : program.get_subcommands({})) names.push_back(command->get_name());
+  if (argc < 2) return "no command given; expected one of: " + fmt::format("{}", fmt::join(names, ", ")) + "\nSee palier --help";
+  if (argv[1][0] == '-') return {};
   const std::string word = argv[1];
   if (std::find(names.begin(), names.end(), word) != names.end()) return {};
   const std::string near = files::did_you_mean(word, names);
@@ -57,7 +58,7 @@ int dispatch(int argc, char** argv) {
   for (CLI::App* command : {check_command, run_command})
     command->add_option("--library", library, "Folder with alloys/ and molds/; default: the shipped cases");
 
-  if (const std::string wrong = misspelt_command(program, argc, argv); !wrong.empty()) throw base::InputError(wrong);
+  if (const std::string wrong = wrong_command(program, argc, argv); !wrong.empty()) throw base::InputError(wrong);
   try {
     program.parse(argc, argv);
   } catch (const CLI::Success& success) {  // --help, --version

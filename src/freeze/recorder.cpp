@@ -11,6 +11,11 @@ Recorder::Recorder(const Setup& setup, const Profile& profile, const std::vector
   for (const double r : probe_radius) probes_.push_back(profile.point(r));
   for (int i = profile.cells().begin; i < profile.cells().end; ++i)
     centers_.push_back(profile.point(body.center()[static_cast<std::size_t>(i)]));
+  for (int i = profile.cells().begin; i <= profile.cells().end; ++i)
+    walk_.push_back(profile.point(body.face()[static_cast<std::size_t>(i)]));
+  if (setup.surface_side > 0) std::reverse(walk_.begin(), walk_.end());
+  to_start_.resize(walk_.size());
+  to_end_.resize(walk_.size());
   history_.radius = body.center();
   history_.face = body.face();
   for (int i = 0; i < body.cells(); ++i) history_.layer.push_back(body.layer_of(i));
@@ -60,35 +65,29 @@ void Recorder::row(const heat::StepView& step, double time) {
 
 /// Positions where freezing has started and ended, seen from the surface, and the width between them over the section.
 void Recorder::waves(const heat::StepView& step, double time) {
-  const heat::Body& body = *setup_.body;
-  const heat::LayerCells metal = profile_.cells();
-  double started = 0, frozen = 0, started_from_surface = 0, frozen_from_surface = 0;
-  bool start_open = true, end_open = true;
+  for (std::size_t i = 0; i < walk_.size(); ++i) {
+    to_start_[i] = profile_.to_start(step, walk_[i], time);
+    to_end_[i] = profile_.to_end(step, walk_[i], time);
+  }
   // A stretch of metal on which a measure goes from a to b counts for the share on which it is below zero.
   const auto share_below = [](double a, double b) {
     if (a <= 0 && b <= 0) return 1.0;
     if (a > 0 && b > 0) return 0.0;
     return (a <= 0 ? a : b) / (a <= 0 ? a - b : b - a);
   };
-  const auto walk = [&](double r0, double r1) {
-    const Point p0 = profile_.point(r0), p1 = profile_.point(r1);
-    const double length = std::abs(r1 - r0);
-    const double s = length * share_below(profile_.to_start(step, p0, time), profile_.to_start(step, p1, time));
-    const double e = length * share_below(profile_.to_end(step, p0, time), profile_.to_end(step, p1, time));
-    started += s;
-    frozen += e;
-    if (start_open) started_from_surface += s;
-    if (end_open) frozen_from_surface += e;
-    start_open = start_open && s >= length;
-    end_open = end_open && e >= length;
-  };
-  const auto& face = body.face();
-  if (setup_.surface_side > 0)
-    for (int i = metal.end; i > metal.begin; --i)
-      walk(face[static_cast<std::size_t>(i)], face[static_cast<std::size_t>(i - 1)]);
-  else
-    for (int i = metal.begin; i < metal.end; ++i)
-      walk(face[static_cast<std::size_t>(i)], face[static_cast<std::size_t>(i + 1)]);
+  double started = 0, frozen = 0, started_from_surface = 0, frozen_from_surface = 0;
+  bool start_open = true, end_open = true;
+  for (std::size_t i = 1; i < walk_.size(); ++i) {
+    const double length = std::abs(walk_[i].radius - walk_[i - 1].radius);
+    const double start = length * share_below(to_start_[i - 1], to_start_[i]);
+    const double end = length * share_below(to_end_[i - 1], to_end_[i]);
+    started += start;
+    frozen += end;
+    if (start_open) started_from_surface += start;
+    if (end_open) frozen_from_surface += end;
+    start_open = start_open && start >= length;
+    end_open = end_open && end >= length;
+  }
   history_.solidus_depth.push_back(frozen_from_surface);
   history_.liquidus_depth.push_back(started_from_surface);
   history_.mushy_width.push_back(std::max(0.0, started - frozen));

@@ -22,4 +22,6 @@ Resolution companion_of(const Resolution& fine) {
   return {std::max(4, fine.metal_cells / 2), std::max(6, fine.wall_cells / 2), 4 * fine.tolerance};
 }
 
+Resolution refined(const Resolution& r) { return {2 * r.metal_cells, 2 * r.wall_cells, r.tolerance / 8}; }
+
 }  // namespace palier::freeze

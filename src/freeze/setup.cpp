@@ -93,6 +93,8 @@ double grading(const Section& s, const Wall& wall, double freezing_time) {
                                         l.properties.body.heat_capacity(T));
     resistance = std::sqrt(freezing_time) / effusivity;
     if (l.contact.over != Contact::Over::perfect) resistance += 1 / l.contact.conductance.largest();
+    // The gap opens with the fraction solid of the metal's first cell, so that cell has to be thin.
+    if (l.contact.over == Contact::Over::surface_fraction_solid) return kSteepest;
   } else if (wall.outer.kind == Boundary::Kind::film) {
     resistance = 1 / (wall.outer.film_coefficient + 1e-300);
   }

@@ -31,7 +31,7 @@ TEST_CASE("Freezing range: order in the cell width at a wall", "[exact][freezing
   const auto solution = LinearFreezing::fixed_wall(alloy, 100, 700);
   ExactCase exact = linear_half_space("plane", alloy, 100, 700, 10);
   const double front = solution.end_front(10);
-  exact.section.accuracy = 1e-6;
+  exact.section.accuracy = 1e-5;
   std::vector<double> ends, starts;
   for (const int cells : {100, 200, 400}) {
     exact.section.cells = cells;

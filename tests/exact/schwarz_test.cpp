@@ -42,7 +42,7 @@ TEST_CASE("Schwarz: second order in the cell width", "[exact][schwarz][order]") 
   const Schwarz solution(aluminum_like(), 720, steel_mold(), 200);
   ExactCase exact = schwarz_half_spaces("Schwarz", aluminum_like(), 720, steel_mold(), 200, until);
   const double front = solution.front(until);
-  exact.section.accuracy = 1e-6;
+  exact.section.accuracy = 1e-5;
   std::vector<double> errors;
   for (const int cells : {200, 400, 800}) {
     exact.section.cells = cells;

@@ -28,6 +28,8 @@ class Recorder {
   const Setup& setup_;
   const Profile& profile_;
   std::vector<Point> probes_, centers_;
+  std::vector<Point> walk_;  ///< the metal's faces, from the surface inward
+  std::vector<double> to_start_, to_end_;
   double every_;
   long next_ = 0;
   History history_;

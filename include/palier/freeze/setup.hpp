@@ -21,6 +21,8 @@ struct Resolution {
 /// The resolution that meets the section's accuracy, and that of its companion run, which is coarser by two.
 Resolution resolution_for(const Section& section);
 Resolution companion_of(const Resolution& fine);
+/// Twice as many cells, with the tolerance that goes with them.
+Resolution refined(const Resolution& coarse);
 
 struct Setup {
   std::unique_ptr<const heat::Body> body;
