@@ -12,7 +12,7 @@ namespace {
 
 constexpr double kSafety = 0.85;
 constexpr double kLongestGrowth = 3;
-constexpr double kNewtonShare = 0.02;   // of the step's tolerance: Newton's error stays well below the step's own
+constexpr double kNewtonShare = 0.1;   // of the step's tolerance: Newton's error stays well below the step's own
 constexpr double kShortest = 1e-13;     // relative to the time gone by
 constexpr double kApproach = 0.9;       // of the time to the last liquid: a step comes this near, not beyond,
 constexpr double kLastSpan = 1e-5;      // until that time is this short, relative to the time gone by

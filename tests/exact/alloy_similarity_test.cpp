@@ -39,7 +39,7 @@ TEST_CASE("Alloy similarity: against sand the face stays at a fixed fraction sol
     CHECK(h.probe_temperature[row] == Approx(T).margin(0.2));
     // 0.07 of the alloy freezes per kelvin here.
     CHECK(h.probe_fraction[row] == Approx(fraction).margin(0.02));
-    CHECK(std::isnan(h.solidus_depth[row]));
+    CHECK(h.solidus_depth[row] == 0.0);
   }
   CHECK(h.surface_flux.back() == Approx(solution.wall_flux(100)).epsilon(1e-3));
   CHECK(std::isnan(result.probes[0].value.end));
@@ -62,6 +62,9 @@ TEST_CASE("Alloy similarity: order in the cell width", "[exact][alloy][order]") 
     starts.push_back(start_error(
         result, [&](double depth) { return solution.start_arrival(depth); }, 0.4 * front, 0.95 * front));
   }
-  check_order(ends, 1.5, 2.5);
-  check_order(starts, 1.5, 2.5);
+  // At the liquidus, and at a solidus without arrest, the slope of T(H) jumps within a cell that is not looked into:
+  // first order at least; second where it fades beside what is smooth. Scheil's path ends in an arrest, whose front is
+  // followed.
+  check_order(ends, rule == BinaryAlloy::Rule::scheil ? 1.4 : 0.9, 2.5);
+  check_order(starts, 0.9, 2.5);
 }

@@ -19,37 +19,39 @@ class Tridiagonal {
   void solve(std::vector<Real>& right) {
     const std::size_t n = right.size(), mid = n / 2;
     // Downward from 0 and upward from n-1 at once; the two chains are independent, so they overlap in the processor.
-    for (std::size_t i = 0, j = n - 1; i < mid; ++i, --j) {
-      Real inverse_i = 1.0 / (i > 0 ? Real(diagonal[i] - lower[i] * ratio_[i - 1]) : diagonal[i]);
-      right[i] = (i > 0 ? Real(right[i] - lower[i] * right[i - 1]) : right[i]) * inverse_i;
-      ratio_[i] = upper[i] * inverse_i;
-      if (j > mid) {
-        Real inverse_j = 1.0 / (j + 1 < n ? Real(diagonal[j] - upper[j] * ratio_[j + 1]) : diagonal[j]);
-        right[j] = (j + 1 < n ? Real(right[j] - upper[j] * right[j + 1]) : right[j]) * inverse_j;
-        ratio_[j] = lower[j] * inverse_j;
-      }
+    // What one row hands to the next stays in registers: the ratio and the right side of the row eliminated last.
+    const Real none = diagonal[0] * 0.0;
+    Real down_ratio = none, down_right = none, up_ratio = none, up_right = none;
+    const auto down = [&](std::size_t i) {
+      const Real inverse = 1.0 / (diagonal[i] - lower[i] * down_ratio);
+      down_right = (right[i] - lower[i] * down_right) * inverse;
+      down_ratio = upper[i] * inverse;
+      right[i] = down_right;
+      ratio_[i] = down_ratio;
+    };
+    const auto up = [&](std::size_t j) {
+      const Real inverse = 1.0 / (diagonal[j] - upper[j] * up_ratio);
+      up_right = (right[j] - upper[j] * up_right) * inverse;
+      up_ratio = lower[j] * inverse;
+      right[j] = up_right;
+      ratio_[j] = up_ratio;
+    };
+    const std::size_t above = n - 1 - mid;  // rows above the middle: as many as below it, or one fewer
+    for (std::size_t i = 0; i < above; ++i) {
+      down(i);
+      up(n - 1 - i);
     }
-    Real diagonal_mid = diagonal[mid];
-    Real right_mid = right[mid];
-    if (mid > 0) {
-      diagonal_mid = diagonal_mid - lower[mid] * ratio_[mid - 1];
-      right_mid = right_mid - lower[mid] * right[mid - 1];
+    if (above < mid) down(mid - 1);
+    right[mid] = (right[mid] - lower[mid] * down_right - upper[mid] * up_right) /
+                 (diagonal[mid] - lower[mid] * down_ratio - upper[mid] * up_ratio);
+    Real falling = right[mid], rising = right[mid];
+    for (std::size_t k = 1; k <= above; ++k) {
+      falling = right[mid - k] - ratio_[mid - k] * falling;
+      right[mid - k] = falling;
+      rising = right[mid + k] - ratio_[mid + k] * rising;
+      right[mid + k] = rising;
     }
-    if (mid + 1 < n) {
-      diagonal_mid = diagonal_mid - upper[mid] * ratio_[mid + 1];
-      right_mid = right_mid - upper[mid] * right[mid + 1];
-    }
-    right[mid] = right_mid / diagonal_mid;
-    for (std::size_t i = mid, j = mid; i > 0 || j + 1 < n;) {
-      if (i > 0) {
-        --i;
-        right[i] = right[i] - ratio_[i] * right[i + 1];
-      }
-      if (j + 1 < n) {
-        ++j;
-        right[j] = right[j] - ratio_[j] * right[j - 1];
-      }
-    }
+    if (above < mid) right[0] = right[0] - ratio_[0] * falling;
   }
 
  private:
