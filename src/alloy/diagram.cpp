@@ -33,9 +33,10 @@ class BinarySide final : public PhaseDiagram {
 
   double liquidus(double composition) const override {
     if (!(composition > 0 && composition <= largest_ * (1 + 1e-12)))
-      throw base::InputError("composition " + std::to_string(composition) + " mass % is outside the diagram; expected 0 to " +
-                             std::to_string(largest_) + " mass %");
-    return lines_.liquidus(composition);
+      throw base::InputError("composition " + std::to_string(composition) +
+                             " mass % is outside the diagram; expected 0 to " + std::to_string(largest_) + " mass %");
+    // largest_ is an inverse of the line: there, rounding may put the line a last bit below the eutectic.
+    return std::max(lines_.liquidus(composition), lines_.eutectic_temperature.value_or(0.0));
   }
   TieLine tie_line(double T) const override {
     const double liquid = composition_on_liquidus(T);

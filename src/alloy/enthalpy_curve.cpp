@@ -10,10 +10,10 @@
 namespace palier::alloy {
 namespace {
 
-constexpr int kPieces = 128;                 // of a curved zone: cubic, so the error is of order 1e-8 of its range
-constexpr std::size_t kNodes = 256;          // of the integration over temperature
-constexpr double kBoilingPoint = 373.15;     // [K] water at 1 atm; CRC Handbook of Chemistry and Physics
-constexpr double kHeatOfBoiling = 2.257e6;   // [J/kg] water at 100 degC; CRC Handbook of Chemistry and Physics
+constexpr int kPieces = 128;                // of a curved zone: cubic, so the error is of order 1e-8 of its range
+constexpr std::size_t kNodes = 256;         // of the integration over temperature
+constexpr double kBoilingPoint = 373.15;    // [K] water at 1 atm; CRC Handbook of Chemistry and Physics
+constexpr double kHeatOfBoiling = 2.257e6;  // [J/kg] water at 100 degC; CRC Handbook of Chemistry and Physics
 
 using Function = std::function<double(double)>;
 
@@ -49,7 +49,8 @@ class RegionEnthalpy {
       if (i > 0) sensible_[i] = sensible_[i - 1] + integrate(r.capacity, node(i - 1), node(i));
       total_[i] = sensible_[i] + r.latent(node(i)) - r.latent(r.low);
       if (i > 0 && !(total_[i] > total_[i - 1]))
-        throw base::InputError("the enthalpy does not rise with temperature: heat capacity, latent heat and path disagree");
+        throw base::InputError(
+            "the enthalpy does not rise with temperature: heat capacity, latent heat and path disagree");
     }
   }
   double rise() const { return total_.back(); }
@@ -118,8 +119,8 @@ class EnthalpyCurve::Builder {
       const double k0 = r.conductivity(T0), k1 = r.conductivity(T1);
       const double theta1 = theta_at_ + integrate(r.conductivity, T0, T1);
       c_.theta_.push_back(monotone_cubic(theta_at_, theta1, spacing * k0 * slope0, spacing * k1 * slope1));
-      c_.ends_.push_back({monotone_cubic(T0, T1, spacing * slope0, spacing * slope1), k0, k1, r.fraction(T0),
-                          r.fraction(T1)});
+      c_.ends_.push_back(
+          {monotone_cubic(T0, T1, spacing * slope0, spacing * slope1), k0, k1, r.fraction(T0), r.fraction(T1)});
       theta_at_ = theta1;
       T0 = T1;
       slope0 = slope1;
@@ -164,12 +165,16 @@ EnthalpyCurve::EnthalpyCurve(const MetalProperties& metal, const SolidificationP
   high = std::max(high, liquidus + 10);
   const double rho = metal.density, L = metal.latent_heat;
   const PhaseProperties &s = metal.solid, &l = metal.liquid;
-  const Region solid{low, end, s.heat_capacity.is_constant() && s.conductivity.is_constant(),
+  const Region solid{low,
+                     end,
+                     s.heat_capacity.is_constant() && s.conductivity.is_constant(),
                      [&](double T) { return rho * s.heat_capacity(T); },
                      [](double) { return 0.0; },
                      [&](double T) { return s.conductivity(T); },
                      [](double) { return 1.0; }};
-  const Region liquid{liquidus, high, l.heat_capacity.is_constant() && l.conductivity.is_constant(),
+  const Region liquid{liquidus,
+                      high,
+                      l.heat_capacity.is_constant() && l.conductivity.is_constant(),
                       [&](double T) { return rho * l.heat_capacity(T); },
                       [&](double) { return rho * L; },
                       [&](double T) { return l.conductivity(T); },
@@ -201,8 +206,7 @@ EnthalpyCurve::EnthalpyCurve(const MetalProperties& metal, const SolidificationP
     const auto fraction = [&path, bottom](double t) {
       return t > bottom ? path.fraction_below(t) : path.fraction_above(bottom);
     };
-    build.region({T, next, false,
-                  [&](double t) { return rho * mix(t, fraction(t), s.heat_capacity, l.heat_capacity); },
+    build.region({T, next, false, [&](double t) { return rho * mix(t, fraction(t), s.heat_capacity, l.heat_capacity); },
                   [&](double t) { return rho * L * (1 - fraction(t)); },
                   [&](double t) { return mix(t, fraction(t), s.conductivity, l.conductivity); }, fraction});
     arrest_here(next);
@@ -218,7 +222,9 @@ EnthalpyCurve::EnthalpyCurve(const MoldProperties& mold, double low, double high
     : liquidus_enthalpy_(-std::numeric_limits<double>::infinity()),
       end_of_freezing_enthalpy_(-std::numeric_limits<double>::infinity()) {
   const PhaseProperties& p = mold.body;
-  Region r{low, high, p.heat_capacity.is_constant() && p.conductivity.is_constant(),
+  Region r{low,
+           high,
+           p.heat_capacity.is_constant() && p.conductivity.is_constant(),
            [&](double T) { return mold.density * p.heat_capacity(T); },
            [](double) { return 0.0; },
            [&](double T) { return p.conductivity(T); },

@@ -73,8 +73,10 @@ SolidificationPath pure_path(double melting_point) {
 
 SolidificationPath measured_path(std::vector<double> temperature, std::vector<double> fraction_solid) {
   const std::size_t n = temperature.size();
-  if (n < 2 || fraction_solid.size() != n)
-    throw base::InputError("measured points: found " + std::to_string(n) + "; expected at least two");
+  if (fraction_solid.size() != n)
+    throw base::InputError("measured points: found " + std::to_string(n) + " temperatures and " +
+                           std::to_string(fraction_solid.size()) + " fractions solid; expected as many of both");
+  if (n < 2) throw base::InputError("measured points: found " + std::to_string(n) + "; expected at least two");
   if (fraction_solid.front() != 0.0) throw base::InputError("measured points: the first must have fraction solid 0");
   for (std::size_t i = 0; i < n; ++i) {
     const std::string which = "measured point " + std::to_string(i + 1) + ": ";

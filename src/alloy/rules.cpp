@@ -20,7 +20,7 @@ double lever_fraction(const TieLine& tie, double composition) {
 /// Temperature at which the last liquid is gone because the solidus passes the composition.
 double lever_solidus(const PhaseDiagram& diagram, double composition, double low, double liquidus) {
   const auto solid_excess = [&](double T) { return diagram.tie_line(T).solid - composition; };
-  if (!(solid_excess(low) > 0)) throw base::InputError("lever rule: the solidus does not reach the composition");
+  if (!(solid_excess(low) >= 0)) throw base::InputError("lever rule: the solidus does not reach the composition");
   std::uintmax_t iterations = 200;
   const auto bracket = boost::math::tools::toms748_solve(solid_excess, low, liquidus,
                                                          boost::math::tools::eps_tolerance<double>(52), iterations);
@@ -39,13 +39,10 @@ SolidificationPath lever_path(const Diagram& diagram, double composition) {
     p.arrests = {
         {last->temperature, 1 - lever_fraction(diagram->tie_line(last->temperature), composition), last->reaction}};
   } else {
-    p.end_of_freezing =
-        lever_solidus(*diagram, composition, last ? last->temperature : 0.01 * p.liquidus, p.liquidus);
+    p.end_of_freezing = lever_solidus(*diagram, composition, last ? last->temperature : 0.01 * p.liquidus, p.liquidus);
   }
   const double solidus = p.arrests.empty() ? p.end_of_freezing : 0.0;
-  p.fraction_above = [=](double T) {
-    return T <= solidus ? 1.0 : lever_fraction(diagram->tie_line(T), composition);
-  };
+  p.fraction_above = [=](double T) { return T <= solidus ? 1.0 : lever_fraction(diagram->tie_line(T), composition); };
   p.solute = [=](double T) {
     const TieLine tie = diagram->tie_line(T);
     return SoluteState{tie.liquid, tie.solid};
@@ -68,7 +65,8 @@ SolidificationPath scheil_path(const Diagram& diagram, double composition) {
   const auto left = [diagram, composition, power = -1 / (1 - *k)](double T) {
     return std::pow(std::max(diagram->tie_line(T).liquid / composition, 1.0), power);
   };
-  p.arrests = {{last->temperature, left(last->temperature), last->reaction}};
+  // With k close to 1 the share left for the eutectic can be too small for a number.
+  if (const double share = left(last->temperature); share > 0) p.arrests = {{last->temperature, share, last->reaction}};
   p.fraction_above = [left](double T) { return 1 - left(T); };
   p.solute = [diagram](double T) {
     const TieLine tie = diagram->tie_line(T);

@@ -66,7 +66,8 @@ std::string answer_table(const files::CaseFile& input, const freeze::Result& r) 
     out += column(with_error(p.value.end, p.error.end), 22);
     out += column(with_error(p.value.local_solidification_time, p.error.local_solidification_time), 24) + "\n";
   }
-  out += fmt::format("\n± is the numerical error, from a coarser companion run; what the data are worth comes on top.\n");
+  out +=
+      fmt::format("\n± is the numerical error, from a coarser companion run; what the data are worth comes on top.\n");
   out += fmt::format("Heat balance closes to {:.1e}; {} steps, {:.1f} ms of CPU.\n", r.heat_imbalance, r.steps,
                      r.cpu_seconds * 1e3);
   for (const std::string& remark : r.remarks) out += "Note: " + remark + "\n";

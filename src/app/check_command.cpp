@@ -30,8 +30,8 @@ void check(const CheckOptions& options) {
   fmt::print("{}: accepted. Key, value, where it comes from:\n\n", input.path);
   print(input.resolved);
   const alloy::SolidificationPath& path = *input.section.path;
-  fmt::print("\nFreezes from {:.2f} to {:.2f} degC ({} path)", path.liquidus() - 273.15, path.end_of_freezing() - 273.15,
-             path.rule());
+  fmt::print("\nFreezes from {:.2f} to {:.2f} degC ({} path)", path.liquidus() - 273.15,
+             path.end_of_freezing() - 273.15, path.rule());
   for (const alloy::Arrest& a : path.arrests())
     fmt::print("; {:.1f} % at {:.2f} degC ({})", 100 * a.fraction, a.temperature - 273.15, a.reaction);
   fmt::print(".\n");

@@ -21,7 +21,8 @@ namespace {
 std::string wrong_command(const CLI::App& program, int argc, char** argv) {
   std::vector<std::string> names;
   for (const CLI::App* command : program.get_subcommands({})) names.push_back(command->get_name());
-  if (argc < 2) return "no command given; expected one of: " + fmt::format("{}", fmt::join(names, ", ")) + "\nSee palier --help";
+  if (argc < 2)
+    return "no command given; expected one of: " + fmt::format("{}", fmt::join(names, ", ")) + "\nSee palier --help";
   if (argv[1][0] == '-') return {};
   const std::string word = argv[1];
   if (std::find(names.begin(), names.end(), word) != names.end()) return {};
@@ -31,25 +32,26 @@ std::string wrong_command(const CLI::App& program, int argc, char** argv) {
 }
 
 int dispatch(int argc, char** argv) {
-  CLI::App program("How a casting section freezes: temperature and fraction solid through plate, cylinder or sphere with "
-                   "its mold.\nExample: palier run cases/castings/cover-rim-sand.yaml -o cover.h5",
-                   "palier");
+  CLI::App program(
+      "How a casting section freezes: temperature and fraction solid through plate, cylinder or sphere with "
+      "its mold.\nExample: palier run cases/castings/cover-rim-sand.yaml -o cover.h5",
+      "palier");
   program.set_version_flag("--version", "palier " + version() + " (" + commit() + ")");
   program.require_subcommand(1);
 
   CheckOptions check_options;
   RunOptions run_options;
   bool reference = false;
-  CLI::App* check_command = program.add_subcommand(
-      "check",
-      "Read a case, resolve it and show every value with its source; solve nothing.\n"
-      "Example: palier check cases/castings/cover-rim-sand.yaml");
+  CLI::App* check_command =
+      program.add_subcommand("check",
+                             "Read a case, resolve it and show every value with its source; solve nothing.\n"
+                             "Example: palier check cases/castings/cover-rim-sand.yaml");
   check_command->add_option("CASE", check_options.case_file, "Case file (YAML)");
   check_command->add_flag("--reference", reference, "Print the reference of all keys (Markdown) instead");
-  CLI::App* run_command = program.add_subcommand(
-      "run",
-      "Run a case: print its times with their numerical error, write the whole history.\n"
-      "Example: palier run cases/castings/cover-rim-sand.yaml -o cover.h5");
+  CLI::App* run_command =
+      program.add_subcommand("run",
+                             "Run a case: print its times with their numerical error, write the whole history.\n"
+                             "Example: palier run cases/castings/cover-rim-sand.yaml -o cover.h5");
   run_command->add_option("CASE", run_options.case_file, "Case file (YAML)")->required();
   run_command->add_option("-o,--output", run_options.output, "Result file (HDF5, also netCDF-4); none unless given");
   run_command->add_flag("--json", run_options.json, "Answer as JSON instead of a table");
@@ -79,7 +81,8 @@ int dispatch(int argc, char** argv) {
     check(check_options);
   } else {
     run_options.library = folder;
-    for (int i = 0; i < argc; ++i) run_options.command_line += (i > 0 ? " " : "") + std::string(i > 0 ? argv[i] : "palier");
+    for (int i = 0; i < argc; ++i)
+      run_options.command_line += (i > 0 ? " " : "") + std::string(i > 0 ? argv[i] : "palier");
     run(run_options);
   }
   return done;

@@ -36,7 +36,8 @@ void ProgressBar::show(double share) {
   const int full = static_cast<int>(kWidth * std::clamp(share, 0.0, 1.0));
   const double gone = std::chrono::duration<double>(now - begin_).count();
   const double left = share > 0.01 ? gone * (1 - share) / share : 0.0;
-  fmt::print(stderr, "\r[{:=<{}}{: <{}}] {:3.0f} %  {:.0f} s left\033[K", "", full, "", kWidth - full, 100 * share, left);
+  fmt::print(stderr, "\r[{:=<{}}{: <{}}] {:3.0f} %  {:.0f} s left\033[K", "", full, "", kWidth - full, 100 * share,
+             left);
   std::fflush(stderr);
 }
 

@@ -31,8 +31,8 @@ Point Profile::point(double radius) const {
   return p;
 }
 
-/// The front that sweeps the cell in this step; its enthalpy has kinks in time then, and a cubic through both ends of the
-/// step says nothing.
+/// The front that sweeps the cell in this step; its enthalpy has kinks in time then, and a cubic through both ends of
+/// the step says nothing.
 const heat::Front* Profile::swept_by(const heat::StepView& step, int cell) const {
   const heat::Fronts &before = step.before().fronts[0], &after = step.after().fronts[0];
   for (int k = 0; k < before.count; ++k) {
@@ -89,14 +89,14 @@ double Profile::cell_fraction(const heat::StepView& step, int cell, double time)
   if (!front) return std::clamp(curve.fraction_solid(step.enthalpy(cell, time)), 0.0, 1.0);
   const double inside = body_.volume_inside(step.front_radius(front->solid_side, time));
   const double left = body_.volume_inside(body_.face()[c]), right = body_.volume_inside(body_.face()[c + 1]);
-  const double share =
-      std::clamp((front->solid_side > 0 ? right - inside : inside - left) / (right - left), 0.0, 1.0);
+  const double share = std::clamp((front->solid_side > 0 ? right - inside : inside - left) / (right - left), 0.0, 1.0);
   const double mush = path_.fraction_above(std::max(center_temperature(step, cell, time), arrest_.temperature));
   return share + (1 - share) * std::min(mush, curve.fraction_solid(arrest_.hot));
 }
 
 Profile::Node Profile::left_node(const heat::StepView& step, const Point& p, double time) const {
-  if (p.left >= metal_.begin) return {body_.center()[static_cast<std::size_t>(p.left)], center_temperature(step, p.left, time)};
+  if (p.left >= metal_.begin)
+    return {body_.center()[static_cast<std::size_t>(p.left)], center_temperature(step, p.left, time)};
   const double face = body_.face()[static_cast<std::size_t>(metal_.begin)];
   if (metal_.begin > 0 || body_.inner().kind != heat::Boundary::Kind::adiabatic)
     return {face, step.inner_surface(time)};
@@ -114,7 +114,8 @@ Profile::Node Profile::right_node(const heat::StepView& step, const Point& p, do
 
 double Profile::temperature(const heat::StepView& step, const Point& p, double time) const {
   Node left = left_node(step, p, time), right = right_node(step, p, time);
-  // A front between the point and a node takes the node's place; a node in the front's own cell is no temperature at all.
+  // A front between the point and a node takes the node's place; a node in the front's own cell is no temperature at
+  // all.
   for (const int solid_side : {-1, +1}) {
     const double radius = step.front_radius(solid_side, time);
     if (!std::isfinite(radius)) continue;
@@ -146,7 +147,8 @@ double Profile::to_end(const heat::StepView& step, const Point& p, double time) 
   const double end_temperature = path_.end_of_freezing();
   const bool at_outer = p.radius >= body_.face()[metal_end], at_inner = p.radius <= body_.face()[metal_begin];
   const bool center = at_inner && metal_.begin == 0 && body_.inner().kind == heat::Boundary::Kind::adiabatic;
-  if (at_outer && body_.outer().kind != heat::Boundary::Kind::adiabatic) return step.outer_surface(time) - end_temperature;
+  if (at_outer && body_.outer().kind != heat::Boundary::Kind::adiabatic)
+    return step.outer_surface(time) - end_temperature;
   if (at_inner && !center) return step.inner_surface(time) - end_temperature;
   if (!arrest_.exists) return temperature(step, p, time) - end_temperature;
   double nearest = 0;

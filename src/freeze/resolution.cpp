@@ -6,8 +6,8 @@
 namespace palier::freeze {
 
 Resolution resolution_for(const Section& section) {
-  // Order two in space: the cells go with the root of the accuracy. A wall that takes heat hard leaves steep profiles at
-  // the start and wants twice as many. The figures were set so that the check cases come out three times better than
+  // Order two in space: the cells go with the root of the accuracy. A wall that takes heat hard leaves steep profiles
+  // at the start and wants twice as many. The figures were set so that the check cases come out three times better than
   // asked; docs/validation.md shows what they give.
   const double finer = std::sqrt(1e-3 / section.accuracy);
   const double hard = 1 + wall_hardness(section);

@@ -59,7 +59,8 @@ std::optional<double> stops_in(const Section& s, const Watch& watch, const Profi
   std::optional<double> stop;
   if (s.stop.below) {
     const auto f = [&](double t) { return hottest(profile, step, t) - *s.stop.below; };
-    if (std::isfinite(watch.frozen()) && f(step.end()) <= 0) stop = f(step.begin()) > 0 ? passes(f, step.begin(), step.end()) : step.end();
+    if (std::isfinite(watch.frozen()) && f(step.end()) <= 0)
+      stop = f(step.begin()) > 0 ? passes(f, step.begin(), step.end()) : step.end();
   } else if (std::isfinite(watch.frozen())) {
     stop = watch.frozen();
   }
@@ -67,9 +68,8 @@ std::optional<double> stops_in(const Section& s, const Watch& watch, const Profi
   return stop;
 }
 
-Outcome march(const Section& s, const Resolution& resolution,
-              const std::shared_ptr<const alloy::EnthalpyCurve>& metal, std::optional<double> record_every,
-              const std::function<void(double)>& at_time) {
+Outcome march(const Section& s, const Resolution& resolution, const std::shared_ptr<const alloy::EnthalpyCurve>& metal,
+              std::optional<double> record_every, const std::function<void(double)>& at_time) {
   const Setup setup = set_up(s, resolution, metal);
   const Profile profile(*setup.body, *s.path);
   std::vector<double> radius;
@@ -124,7 +124,8 @@ double round_interval(double duration) {
 void remark_beyond(std::vector<std::string>& remarks, const std::string& whose, const base::Table& table, double low,
                    double high) {
   constexpr double kWorthTelling = 1;  // [K]
-  if (table.is_constant() || (table.x().front() <= low + kWorthTelling && table.x().back() >= high - kWorthTelling)) return;
+  if (table.is_constant() || (table.x().front() <= low + kWorthTelling && table.x().back() >= high - kWorthTelling))
+    return;
   const auto celsius = [](double T) { return std::to_string(std::lround(T - 273.15)); };
   remarks.push_back(whose + " is known from " + celsius(table.x().front()) + " to " + celsius(table.x().back()) +
                     " degC and was held constant beyond; the run went from " + celsius(low) + " to " + celsius(high) +
@@ -160,8 +161,9 @@ std::vector<std::string> remarks_on(const Section& s, const History& h) {
 std::string accuracy_missed(double reached, double asked) {
   std::ostringstream text;
   text.precision(2);
-  text << "the accuracy asked for, " << 100 * asked << " %, was not reached: the ends of freezing bear a numerical error of up to "
-       << 100 * reached << " % of the time the section takes";
+  text << "the accuracy asked for, " << 100 * asked
+       << " %, was not reached: the ends of freezing bear a numerical error of up to " << 100 * reached
+       << " % of the time the section takes";
   return text.str();
 }
 

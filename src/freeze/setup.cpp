@@ -55,8 +55,7 @@ Spacing spacing(const Wall& wall, double freezing_time, int cells) {
   for (const WallLayer& l : wall.layers) total += l.thickness;
   const alloy::MoldProperties& p = wall.layers.front().properties;
   const double T = wall.layers.front().start_temperature;
-  const double reach =
-      std::sqrt(p.body.conductivity(T) / (p.density * p.body.heat_capacity(T)) * freezing_time);
+  const double reach = std::sqrt(p.body.conductivity(T) / (p.density * p.body.heat_capacity(T)) * freezing_time);
   const double b = std::log(1 + 15 * total / reach);
   return {total * b / (cells * std::expm1(b)), std::exp(b / cells)};
 }
@@ -73,14 +72,16 @@ std::vector<std::vector<double>> wall_widths(const Wall& wall, double freezing_t
     // n cells growing from `width`: width (g^n - 1)/(g - 1) = thickness
     const double wanted = std::log1p(l.thickness / width * (s.growth - 1)) / std::log(s.growth);
     const int n = l.cells ? *l.cells : std::max(kFewestCells, static_cast<int>(std::lround(wanted)));
-    widths.push_back(heat::graded_widths(l.thickness, n, l.cells ? std::exp(std::log(s.growth) * wanted / n) : s.growth));
+    widths.push_back(
+        heat::graded_widths(l.thickness, n, l.cells ? std::exp(std::log(s.growth) * wanted / n) : s.growth));
     width = std::max(width, widths.back().back() * s.growth);
   }
   return widths;
 }
 
 /// How much wider the metal's last cell is than its first at a wall: the harder the wall takes heat, the steeper the
-/// metal near it early on, up to a face held at one temperature. Judged by the Biot number of contact and mold in series.
+/// metal near it early on, up to a face held at one temperature. Judged by the Biot number of contact and mold in
+/// series.
 constexpr double kSteepest = 24;
 
 double grading(const Section& s, const Wall& wall, double freezing_time) {
@@ -89,8 +90,8 @@ double grading(const Section& s, const Wall& wall, double freezing_time) {
   if (!wall.layers.empty()) {
     const WallLayer& l = wall.layers.front();
     const double T = l.start_temperature;
-    const double effusivity = std::sqrt(l.properties.body.conductivity(T) * l.properties.density *
-                                        l.properties.body.heat_capacity(T));
+    const double effusivity =
+        std::sqrt(l.properties.body.conductivity(T) * l.properties.density * l.properties.body.heat_capacity(T));
     resistance = std::sqrt(freezing_time) / effusivity;
     if (l.contact.over != Contact::Over::perfect) resistance += 1 / l.contact.conductance.largest();
     // The gap opens with the fraction solid of the metal's first cell, so that cell has to be thin.
@@ -176,8 +177,9 @@ void refuse_contact(const Wall& wall) {
 
 double rough_freezing_time(const Section& s) {
   const double liquidus = s.path->liquidus();
-  const double stored = s.metal.density * (s.metal.latent_heat + s.metal.liquid.heat_capacity(liquidus) *
-                                                                     (s.pouring_temperature - s.path->end_of_freezing()));
+  const double stored =
+      s.metal.density * (s.metal.latent_heat +
+                         s.metal.liquid.heat_capacity(liquidus) * (s.pouring_temperature - s.path->end_of_freezing()));
   const int m = static_cast<int>(s.shape);
   const double modulus = s.depth() / (s.inside ? 2 : 1) / (m + 1);
   const double heat = stored * modulus;  // per area of wall
@@ -259,8 +261,8 @@ Setup set_up(const Section& s, const Resolution& resolution, std::shared_ptr<con
     start.push_back(wall.start[i]);
     out.layer_names.push_back(wall.names[i]);
   }
-  out.body = std::make_unique<const heat::Body>(s.shape, inner_radius, std::move(layers), metal, inner,
-                                                s.outside.outer);
+  out.body =
+      std::make_unique<const heat::Body>(s.shape, inner_radius, std::move(layers), metal, inner, s.outside.outer);
 
   const heat::Body& body = *out.body;
   const heat::LayerCells cells = body.metal_cells();
@@ -272,7 +274,8 @@ Setup set_up(const Section& s, const Resolution& resolution, std::shared_ptr<con
     const double T = start[static_cast<std::size_t>(layer)];
     // A mold is measured by what it takes to reach the liquidus, at least by a tenth of the way from its cold range.
     const double reach = std::max(std::abs(liquidus - T), 0.1 * (range.high - range.low));
-    const double scale = layer == metal ? heat_to_solid(c, s.pouring_temperature) : c.enthalpy(T + reach) - c.enthalpy(T);
+    const double scale =
+        layer == metal ? heat_to_solid(c, s.pouring_temperature) : c.enthalpy(T + reach) - c.enthalpy(T);
     for (int i = body.layer_cells(layer).begin; i < body.layer_cells(layer).end; ++i) {
       const bool profile = layer == metal && s.start_profile;
       const double at = profile ? s.start_profile(body.center()[static_cast<std::size_t>(i)]) : T;

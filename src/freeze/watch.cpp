@@ -9,8 +9,8 @@ namespace {
 
 constexpr double kNever = std::numeric_limits<double>::quiet_NaN();
 
-/// Root of a function that is positive at a and not positive at b; regula falsi with the Illinois change, bisection when
-/// it drags. The functions have kinks, so nothing smarter is asked.
+/// Root of a function that is positive at a and not positive at b; regula falsi with the Illinois change, bisection
+/// when it drags. The functions have kinks, so nothing smarter is asked.
 template <class Function>
 double falls_through_zero(const Function& f, double a, double b, double fa, double fb) {
   const double close = 1e-12 * std::abs(b) + 1e-9 * (b - a);

@@ -71,19 +71,21 @@ void FrontPassage<Real>::note_solid_gain(int l, int side, const State<Real>& fro
   const LayerCells metal = field_.body(l).metal_cells();
   const int solid = front->cell + side;
   if (solid >= metal.begin && solid < metal.end)
-    noted = (lane(from.flow[static_cast<std::size_t>(solid)], l) - lane(from.flow[static_cast<std::size_t>(solid + 1)], l)) /
+    noted = (lane(from.flow[static_cast<std::size_t>(solid)], l) -
+             lane(from.flow[static_cast<std::size_t>(solid + 1)], l)) /
             field_.body(l).volume()[static_cast<std::size_t>(solid)];
 }
 
-/// A cell that froze within the stage: the explicit part of the stage still took its latent heat for the whole length, or
-/// not yet all of it. What it took too much or too little is the next cell's, so it is passed on through the base of the
-/// stage; left where it is, it would come back as a flow between the two that the step must not believe in. The sum stays.
+/// A cell that froze within the stage: the explicit part of the stage still took its latent heat for the whole length,
+/// or not yet all of it. What it took too much or too little is the next cell's, so it is passed on through the base of
+/// the stage; left where it is, it would come back as a flow between the two that the step must not believe in. The sum
+/// stays.
 template <class Real>
 void FrontPassage<Real>::pass_on_debt(Stage<Real>& stage, int l, int cell, int next, int side) const {
   const auto c = static_cast<std::size_t>(cell), n = static_cast<std::size_t>(next);
   const std::vector<double>& volume = field_.body(l).volume();
-  const double due = lane(stage.unknown[c], l) -
-                     lane(stage.weight, l) * solid_gain_[static_cast<std::size_t>(l)][side > 0 ? 1 : 0];
+  const double due =
+      lane(stage.unknown[c], l) - lane(stage.weight, l) * solid_gain_[static_cast<std::size_t>(l)][side > 0 ? 1 : 0];
   lane(stage.base[n], l) += (lane(stage.base[c], l) - due) * volume[c] / volume[n];
   lane(stage.base[c], l) = due;
 }
@@ -91,9 +93,11 @@ void FrontPassage<Real>::pass_on_debt(Stage<Real>& stage, int l, int cell, int n
 /// For all cells that froze before the stage under way begins.
 template <class Real>
 void FrontPassage<Real>::pass_on_debts(Stage<Real>& stage, int l, int side, const Fronts& before) const {
-  const Front *then = before.with_solid_side(side), *now = stage.fronts[static_cast<std::size_t>(l)].with_solid_side(side);
+  const Front *then = before.with_solid_side(side),
+              *now = stage.fronts[static_cast<std::size_t>(l)].with_solid_side(side);
   if (!then || !now) return;
-  for (int cell = then->cell; (cell - now->cell) * side > 0; cell -= side) pass_on_debt(stage, l, cell, cell - side, side);
+  for (int cell = then->cell; (cell - now->cell) * side > 0; cell -= side)
+    pass_on_debt(stage, l, cell, cell - side, side);
 }
 
 /// The front has melted its way out of the cell on the solid side.

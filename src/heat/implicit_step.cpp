@@ -13,11 +13,11 @@ using base::lane_count;
 namespace {
 
 constexpr int kMostIterations = 14;
-constexpr double kPastKink = 1e-12;     // relative; a cell stopped at a kink lands just on its far side
+constexpr double kPastKink = 1e-12;  // relative; a cell stopped at a kink lands just on its far side
 
 const double kGamma = 2 - std::sqrt(2.0);
-const double kDiagonal = kGamma / 2;         // weight of the stage itself
-const double kWeight = std::sqrt(2.0) / 4;   // weight of the two earlier stages in the last
+const double kDiagonal = kGamma / 2;        // weight of the stage itself
+const double kWeight = std::sqrt(2.0) / 4;  // weight of the two earlier stages in the last
 
 }  // namespace
 
@@ -95,8 +95,8 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
     const Real last = gain(to.flow, i);
     to.enthalpy[i] = stage_.base[i] + weight * last;
     // Embedded third-order weights (1-w)/3, (3w+1)/3, d/3 against w, w, d.
-    change_[i] = length * ((4 * kWeight - 1) / 3 * gain(from.flow, i) - gain(middle_flow_, i) / 3.0 +
-                           2 * kDiagonal / 3 * last);
+    change_[i] =
+        length * ((4 * kWeight - 1) / 3 * gain(from.flow, i) - gain(middle_flow_, i) / 3.0 + 2 * kDiagonal / 3 * last);
   }
   for (int l = 0; l < lane_count<Real>; ++l) {
     const auto s = static_cast<std::size_t>(l);
@@ -113,7 +113,14 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
       const int last = last_swept(l, *before, from.fronts[static_cast<std::size_t>(l)]);
       share_error(l, before->cell, last);
     }
-  if (getenv("DBG") && stage_.fronts[0].count) { int j=stage_.fronts[0].front[0].cell; printf("   h %.3g:", lane(length,0)); for(int c=j-1;c<=j+3;++c) printf(" c%d f %.5g %.5g %.5g |",c, lane(gain(from.flow,c),0)/lane(scale_[c],0), lane(gain(middle_flow_,c),0)/lane(scale_[c],0), lane(gain(to.flow,c),0)/lane(scale_[c],0)); puts(""); }
+  if (getenv("DBG") && stage_.fronts[0].count) {
+    int j = stage_.fronts[0].front[0].cell;
+    printf("   h %.3g:", lane(length, 0));
+    for (int c = j - 1; c <= j + 3; ++c)
+      printf(" c%d f %.5g %.5g %.5g |", c, lane(gain(from.flow, c), 0) / lane(scale_[c], 0),
+             lane(gain(middle_flow_, c), 0) / lane(scale_[c], 0), lane(gain(to.flow, c), 0) / lane(scale_[c], 0));
+    puts("");
+  }
   // Damped by the step's own operator, or stiff cells would make the estimate meaningless.
   assemble(weight);
   matrix_.solve(change_);
@@ -122,8 +129,8 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
   return report;
 }
 
-/// The cell in which a front that was there at the begin of the step is now. One that ended swept all there was, up to the
-/// other front if that lives or lived.
+/// The cell in which a front that was there at the begin of the step is now. One that ended swept all there was, up to
+/// the other front if that lives or lived.
 template <class Real>
 int ImplicitStep<Real>::last_swept(int l, const Front& before, const Fronts& all_before) const {
   const Fronts& now = stage_.fronts[static_cast<std::size_t>(l)];
@@ -141,7 +148,8 @@ int ImplicitStep<Real>::last_swept(int l, const Front& before, const Fronts& all
 template <class Real>
 void ImplicitStep<Real>::share_error(int l, int first, int last) {
   const std::vector<double>& all_volumes = field_.body(l).volume();
-  const auto low = static_cast<std::size_t>(std::min(first, last)), high = static_cast<std::size_t>(std::max(first, last));
+  const auto low = static_cast<std::size_t>(std::min(first, last)),
+             high = static_cast<std::size_t>(std::max(first, last));
   double sum = 0, volume = 0;
   for (std::size_t i = low; i <= high; ++i) {
     sum += all_volumes[i] * lane(change_[i], l);
@@ -266,8 +274,8 @@ void ImplicitStep<Real>::assemble(const Real& weight) {
   }
 }
 
-/// Applies change_ to the unknowns. A cell stops just past the first kink of its curve on the way, or Newton would cycle
-/// about it; a front that leaves its cell is handed over to the next one.
+/// Applies change_ to the unknowns. A cell stops just past the first kink of its curve on the way, or Newton would
+/// cycle about it; a front that leaves its cell is handed over to the next one.
 template <class Real>
 void ImplicitStep<Real>::move(const Real& time) {
   for (int l = 0; l < lane_count<Real>; ++l) {

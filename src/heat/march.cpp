@@ -12,11 +12,11 @@ namespace {
 
 constexpr double kSafety = 0.85;
 constexpr double kLongestGrowth = 3;
-constexpr double kNewtonShare = 0.1;   // of the step's tolerance: Newton's error stays well below the step's own
-constexpr double kShortest = 1e-13;     // relative to the time gone by
-constexpr double kApproach = 0.9;       // of the time to the last liquid: a step comes this near, not beyond,
-constexpr double kLastSpan = 1e-5;      // until that time is this short, relative to the time gone by
-constexpr int kHardNewton = 18;         // iterations of a step from which on its length may not grow
+constexpr double kNewtonShare = 0.1;  // of the step's tolerance: Newton's error stays well below the step's own
+constexpr double kShortest = 1e-13;   // relative to the time gone by
+constexpr double kApproach = 0.9;     // of the time to the last liquid: a step comes this near, not beyond,
+constexpr double kLastSpan = 1e-5;    // until that time is this short, relative to the time gone by
+constexpr int kHardNewton = 18;       // iterations of a step from which on its length may not grow
 
 /// Start well inside the diffusion time of the smallest cell; the error estimate takes over from there.
 double first_length(const Body& body) {
@@ -162,9 +162,10 @@ const StepView& March::step(double limit) {
       const int cell = std::max(report.worst_cell, 0);
       text << "step from t = " << begin << " s failed even at a length of " << h << " s: Newton stalled after "
            << report.iterations << " iterations, residual " << report.residual << " of the heat scale (wanted "
-           << kNewtonShare * tolerance_ << "), worst in cell " << cell << " at r = "
-           << body_.center()[static_cast<std::size_t>(cell)] << " m, T = "
-           << body_.curve(body_.layer_of(cell)).temperature(from.enthalpy[static_cast<std::size_t>(cell)]) << " K";
+           << kNewtonShare * tolerance_ << "), worst in cell " << cell
+           << " at r = " << body_.center()[static_cast<std::size_t>(cell)]
+           << " m, T = " << body_.curve(body_.layer_of(cell)).temperature(from.enthalpy[static_cast<std::size_t>(cell)])
+           << " K";
       throw base::NoSolution(text.str());
     }
   }

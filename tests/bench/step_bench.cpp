@@ -35,8 +35,8 @@ void step(benchmark::State& state) {
   bodies.fill(body.get());
   const auto n = static_cast<std::size_t>(state.range(0));
   heat::ImplicitStep<Real> stepper(bodies, std::vector<Real>(n, base::all_lanes<Real>(1e9)));
-  heat::State<Real> from = stepper.start(
-      std::vector<Real>(n, base::all_lanes<Real>(body->metal_curve().enthalpy(960))), base::all_lanes<Real>(0));
+  heat::State<Real> from = stepper.start(std::vector<Real>(n, base::all_lanes<Real>(body->metal_curve().enthalpy(960))),
+                                         base::all_lanes<Real>(0));
   heat::State<Real> to = from;
   Real error = base::all_lanes<Real>(0);
   for (auto _ : state)

@@ -31,24 +31,25 @@ class PhaseDiagram {
   virtual double liquidus(double composition) const = 0;
   /// Phases in equilibrium at T, between the invariant (or the end of the lines) and the melting point.
   virtual TieLine tie_line(double T) const = 0;
-  virtual double melting_point() const = 0;                  ///< of the pure base metal [K]
-  virtual std::optional<Invariant> invariant() const = 0;    ///< reaction in which the last liquid freezes, if any
-  virtual double largest_composition() const = 0;            ///< end of the range of validity [mass %]
+  virtual double melting_point() const = 0;                ///< of the pure base metal [K]
+  virtual std::optional<Invariant> invariant() const = 0;  ///< reaction in which the last liquid freezes, if any
+  virtual double largest_composition() const = 0;          ///< end of the range of validity [mass %]
   /// Solid to liquid composition where it is the same at every temperature; rules then have closed forms.
   virtual std::optional<double> constant_partition() const { return std::nullopt; }
 };
 
 /// Liquidus and solidus of the base metal's side of a binary, as lines.
 struct BinaryLines {
-  double melting_point = 0;                 ///< [K]
-  base::Table liquidus;                     ///< temperature [K] over composition [mass %], falling from the melting point
-  double partition_coefficient = 0;         ///< solid/liquid composition, 0 < k < 1
+  double melting_point = 0;          ///< [K]
+  base::Table liquidus;              ///< temperature [K] over composition [mass %], falling from the melting point
+  double partition_coefficient = 0;  ///< solid/liquid composition, 0 < k < 1
   std::optional<double> eutectic_temperature;  ///< [K]
   /// A straight liquidus. @param slope [K per mass %], negative
   static BinaryLines straight(double melting_point, double slope, double k, std::optional<double> eutectic);
 };
 
-/// Throws InputError where the lines make no diagram (rising liquidus, eutectic above the melting point, k outside 0..1).
+/// Throws InputError where the lines make no diagram (rising liquidus, eutectic above the melting point, k outside
+/// 0..1).
 std::shared_ptr<const PhaseDiagram> make_diagram(BinaryLines lines);
 
 /// Lever rule: both phases of uniform composition at any time. Source: mass balance, any textbook of solidification.

@@ -33,10 +33,10 @@ struct MoldProperties {
 
 /// A piece of T(H) that is flat: an arrest.
 struct FlatPiece {
-  double temperature;         ///< [K]
-  double cold_end, hot_end;   ///< enthalpy when completed and when begun [J/m3]
-  double fraction_before;     ///< fraction solid when begun
-  double fraction_after;      ///< fraction solid when completed
+  double temperature;        ///< [K]
+  double cold_end, hot_end;  ///< enthalpy when completed and when begun [J/m3]
+  double fraction_before;    ///< fraction solid when begun
+  double fraction_after;     ///< fraction solid when completed
 };
 
 /// Which end of an arrest an enthalpy at its temperature means.
@@ -83,7 +83,7 @@ class EnthalpyCurve {
   const std::vector<FlatPiece>& arrests() const { return arrests_; }  ///< by rising temperature
   /// Enthalpies where the slope of T(H) jumps, rising: ends of arrests, liquidus.
   const std::vector<double>& kinks() const { return kinks_; }
-  double liquidus_enthalpy() const { return liquidus_enthalpy_; }          ///< all liquid above; -inf for a mold
+  double liquidus_enthalpy() const { return liquidus_enthalpy_; }                ///< all liquid above; -inf for a mold
   double end_of_freezing_enthalpy() const { return end_of_freezing_enthalpy_; }  ///< all solid below; -inf for a mold
 
  private:

@@ -18,7 +18,7 @@ struct Arrest {
 /// Solute in the two phases at a temperature of the path [mass %].
 struct SoluteState {
   double liquid;
-  double solid;          ///< of the solid that forms at this temperature
+  double solid;  ///< of the solid that forms at this temperature
 };
 
 /// Fraction solid against falling temperature.
@@ -28,10 +28,10 @@ struct SoluteState {
 class SolidificationPath {
  public:
   struct Parts {
-    std::string rule;                 ///< "pure", "lever", "scheil", "measured", ...
-    double liquidus = 0;              ///< [K]
-    double end_of_freezing = 0;       ///< [K], <= liquidus
-    std::vector<Arrest> arrests;      ///< by falling temperature
+    std::string rule;             ///< "pure", "lever", "scheil", "measured", ...
+    double liquidus = 0;          ///< [K]
+    double end_of_freezing = 0;   ///< [K], <= liquidus
+    std::vector<Arrest> arrests;  ///< by falling temperature
     /// fraction solid just above T, end_of_freezing <= T <= liquidus (that is, before an arrest at T has begun)
     std::function<double(double)> fraction_above;
     /// solute at T within the range; empty where the path knows no composition

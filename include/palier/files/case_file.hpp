@@ -27,8 +27,8 @@ struct CaseFile {
   std::string path;
   std::string text;  ///< the file's bytes
   freeze::Section section;
-  std::vector<ResolvedValue> resolved;   ///< in the order of the reference page; defaults included
-  std::vector<MaterialFile> materials;   ///< each once, in order of first use
+  std::vector<ResolvedValue> resolved;  ///< in the order of the reference page; defaults included
+  std::vector<MaterialFile> materials;  ///< each once, in order of first use
 };
 
 /// Reads a case. Materials are looked up by name beside the case file, then in `<library>/alloys`, `<library>/molds`.

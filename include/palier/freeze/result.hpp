@@ -8,9 +8,9 @@ namespace palier::freeze {
 
 /// Times at one depth [s]; NaN: not reached in this run.
 struct Reading {
-  double depth = 0;                   ///< below the surface [m]
-  double start = 0;                   ///< freezing starts: temperature falls through the liquidus
-  double end = 0;                     ///< freezing ends: no liquid left at this depth
+  double depth = 0;                      ///< below the surface [m]
+  double start = 0;                      ///< freezing starts: temperature falls through the liquidus
+  double end = 0;                        ///< freezing ends: no liquid left at this depth
   double local_solidification_time = 0;  ///< end - start
 };
 
@@ -39,17 +39,17 @@ struct History {
 };
 
 struct Result {
-  double solidification_time = 0;        ///< last point of the metal [s]; NaN: stopped before
-  double solidification_time_error = 0;  ///< numerical [s]
-  double last_to_freeze = 0;             ///< its depth [m]
-  double end_time = 0;                   ///< where the run stopped [s]
-  double heat_imbalance = 0;             ///< worst over the run, relative to the heat content
+  double solidification_time = 0;                             ///< last point of the metal [s]; NaN: stopped before
+  double solidification_time_error = 0;                       ///< numerical [s]
+  double last_to_freeze = 0;                                  ///< its depth [m]
+  double end_time = 0;                                        ///< where the run stopped [s]
+  double heat_imbalance = 0;                                  ///< worst over the run, relative to the heat content
   long steps = 0, rejected_steps = 0, newton_iterations = 0;  ///< of the fine run
-  double cpu_seconds = 0;                ///< fine and companion run
+  double cpu_seconds = 0;                                     ///< fine and companion run
   std::vector<ProbeReading> probes;
-  std::vector<Reading> by_depth;         ///< at every cell center of the metal
+  std::vector<Reading> by_depth;  ///< at every cell center of the metal
   History history;
-  std::vector<std::string> remarks;      ///< assumptions worth telling, e.g. a property held constant beyond its table
+  std::vector<std::string> remarks;  ///< assumptions worth telling, e.g. a property held constant beyond its table
 };
 
 }  // namespace palier::freeze

@@ -16,10 +16,10 @@ struct Terminal {
 
 /// Flux through a face and its derivatives with respect to the unknowns on both sides.
 struct FaceFlow {
-  double flux = 0;        ///< positive from the first to the second side [W/m2]
-  double by_first = 0;    ///< d flux / d unknown of the first side
-  double by_second = 0;   ///< d flux / d unknown of the second side
-  double surface = 0;     ///< temperature of the first side's face [K]
+  double flux = 0;       ///< positive from the first to the second side [W/m2]
+  double by_first = 0;   ///< d flux / d unknown of the first side
+  double by_second = 0;  ///< d flux / d unknown of the second side
+  double surface = 0;    ///< temperature of the first side's face [K]
 };
 
 /// The state a contact law may look at, besides the face temperature it finds itself.

@@ -45,9 +45,9 @@ struct Fronts {
 struct LastArrest {
   explicit LastArrest(const alloy::EnthalpyCurve& metal);
   bool exists = false;
-  double temperature = 0;           ///< [K]
-  double potential = 0;             ///< [W/m]
-  double cold = 0, hot = 0;         ///< enthalpy completed and begun [J/m3]
+  double temperature = 0;                                  ///< [K]
+  double potential = 0;                                    ///< [W/m]
+  double cold = 0, hot = 0;                                ///< enthalpy completed and begun [J/m3]
   double solid_conductivity = 0, liquid_conductivity = 0;  ///< on both sides [W/m/K]
   double solid_capacity = 0, liquid_capacity = 0;          ///< dH/dT on both sides [J/m3/K]
 };

@@ -23,8 +23,8 @@ class FrontPassage {
   /// For all cells a front swept before the stage now under way begins, see pass_on_debt in the source.
   void pass_on_debts(Stage<Real>& stage, int lane, int side, const Fronts& before) const;
 
-  /// Looks for fronts to follow from now on: a cell half frozen between a solid side and a liquid side, or a wall's cell
-  /// whose face has come down to the arrest.
+  /// Looks for fronts to follow from now on: a cell half frozen between a solid side and a liquid side, or a wall's
+  /// cell whose face has come down to the arrest.
   void adopt(State<Real>& state, const Real& time);
 
  private:

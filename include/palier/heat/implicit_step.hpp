@@ -14,17 +14,17 @@ namespace palier::heat {
 struct StepReport {
   enum class Status { made, stalled };
   Status status = Status::made;
-  int iterations = 0;      ///< of Newton, both stages
-  double residual = 0;     ///< largest, relative to the cell's heat scale; of a stalled step
-  int worst_cell = -1;     ///< where
+  int iterations = 0;   ///< of Newton, both stages
+  double residual = 0;  ///< largest, relative to the cell's heat scale; of a stalled step
+  int worst_cell = -1;  ///< where
 };
 
 /// Makes steps of a fixed set of lanes; owns all its work space and allocates nothing in a step.
 ///
 /// Time: TR-BDF2 (R. E. Bank et al., IEEE Trans. Electron Devices 32 (1985) 1992) in the one-step form with embedded
 /// error estimate of M. E. Hosea & L. F. Shampine, Appl. Numer. Math. 20 (1996) 21.
-/// Newton iterates until the residual is below its tolerance; then the new enthalpy is set from the flows themselves, so
-/// that what one cell loses its neighbor gains exactly.
+/// Newton iterates until the residual is below its tolerance; then the new enthalpy is set from the flows themselves,
+/// so that what one cell loses its neighbor gains exactly.
 template <class Real>
 class ImplicitStep {
  public:
@@ -37,8 +37,8 @@ class ImplicitStep {
   /// A state from enthalpies; no fronts yet.
   State<Real> start(const std::vector<Real>& enthalpy, const Real& time);
 
-  /// From `from` at `time` over `length` [s] to `to` (its vectors must have their sizes). On success `error` is the norm
-  /// of the local error relative to the metal's heat scale, per lane.
+  /// From `from` at `time` over `length` [s] to `to` (its vectors must have their sizes). On success `error` is the
+  /// norm of the local error relative to the metal's heat scale, per lane.
   StepReport advance(const State<Real>& from, const Real& time, const Real& length, double newton_tolerance,
                      State<Real>& to, Real& error);
 

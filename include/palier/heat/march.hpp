@@ -70,7 +70,8 @@ class March {
 
  private:
   double heat() const;
-  /// Time the front now in the metal needs for the liquid left at its present rate [s]; infinite if there is none or two.
+  /// Time the front now in the metal needs for the liquid left at its present rate [s]; infinite if there is none or
+  /// two.
   double time_to_last_liquid() const;
 
   const Body& body_;
