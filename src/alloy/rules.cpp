@@ -34,12 +34,15 @@ SolidificationPath lever_path(const Diagram& diagram, double composition) {
   p.rule = "lever";
   p.liquidus = diagram->liquidus(composition);
   const std::optional<Invariant> last = diagram->invariant();
-  if (last && diagram->tie_line(last->temperature).solid < composition) {
+  if (last && diagram->tie_line(last->temperature).solid <= composition) {
     p.end_of_freezing = last->temperature;
-    p.arrests = {
-        {last->temperature, 1 - lever_fraction(diagram->tie_line(last->temperature), composition), last->reaction}};
+    // Nothing is left for the eutectic at the largest solubility itself.
+    const double share = 1 - lever_fraction(diagram->tie_line(last->temperature), composition);
+    if (share > 0) p.arrests = {{last->temperature, share, last->reaction}};
   } else {
-    p.end_of_freezing = lever_solidus(*diagram, composition, last ? last->temperature : 0.01 * p.liquidus, p.liquidus);
+    // No further than the lines are drawn.
+    const double lowest = last ? last->temperature : diagram->liquidus(diagram->largest_composition());
+    p.end_of_freezing = lever_solidus(*diagram, composition, lowest, p.liquidus);
   }
   const double solidus = p.arrests.empty() ? p.end_of_freezing : 0.0;
   p.fraction_above = [=](double T) { return T <= solidus ? 1.0 : lever_fraction(diagram->tie_line(T), composition); };

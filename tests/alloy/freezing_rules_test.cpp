@@ -35,11 +35,10 @@ TEST_CASE("fraction solid of Al-4.5Cu over temperature", "[alloy][lever][scheil]
     double fraction, lever, scheil;  ///< temperatures in degC
   };
   const auto lever = lever_path(samples::al_cu(), 4.5), scheil = scheil_path(samples::al_cu(), 4.5);
-  for (const Row& row :
-       {Row{0.0, 644.727272727, 644.727272727}, Row{0.1, 643.344899375, 643.331546274},
-        Row{0.25, 640.728419845, 640.608306064}, Row{0.5, 633.892773893, 632.849896284},
-        Row{0.75, 619.542444311, 611.735658039}, Row{0.85, 608.140145084, 586.25019921},
-        Row{0.9, 599.633489041, 556.743691031}}) {
+  for (const Row& row : {Row{0.0, 644.727272727, 644.727272727}, Row{0.1, 643.344899375, 643.331546274},
+                         Row{0.25, 640.728419845, 640.608306064}, Row{0.5, 633.892773893, 632.849896284},
+                         Row{0.75, 619.542444311, 611.735658039}, Row{0.85, 608.140145084, 586.25019921},
+                         Row{0.9, 599.633489041, 556.743691031}}) {
     // The temperatures have 9 decimals, and df/dT is at most 0.04 per kelvin here.
     CHECK(lever.fraction_above(row.lever + 273.15) == Approx(row.fraction).margin(1e-10));
     CHECK(scheil.fraction_above(row.scheil + 273.15) == Approx(row.fraction).margin(1e-10));
@@ -178,7 +177,7 @@ TEST_CASE("what casting practice expects of a freezing alloy", "[alloy][lever][s
       for (const auto& path : {lever, scheil}) {
         CHECK(path.liquidus() < diagram->melting_point());
         CHECK(path.solute(path.liquidus()).value().liquid == Approx(c).epsilon(1e-10));
-        CHECK(path.solute(path.liquidus()).value().solid < c);  // the first solid is poorer than the alloy
+        CHECK(path.solute(path.liquidus()).value().solid < c);              // the first solid is poorer than the alloy
         CHECK(path.solute(path.end_of_freezing()).value().liquid > 2 * c);  // the last liquid is far richer
       }
       // Without diffusion in the solid freezing ends later, and with more eutectic.

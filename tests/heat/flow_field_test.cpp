@@ -198,6 +198,7 @@ TEST_CASE("Flow field: nothing flows in a level body, and contacts conserve", "[
   for (const Shape shape : shapes) {
     const Body body = body_of({shape, 0.04, 0.02, 6, 4, 3}, range_metal(), {}, {}, {});
     std::vector<double> level;
+    level.reserve(body.volume().size());
     for (int i = 0; i < body.cells(); ++i) level.push_back(body.curve(body.layer_of(i)).enthalpy(700));
     FlowField<double> field({&body});
     field.evaluate(kTime, level, {});

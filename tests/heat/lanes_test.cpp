@@ -38,6 +38,7 @@ constexpr std::array<double, 4> pouring{960, 853, 940, 853};
 
 std::vector<double> start_of(const Body& body, double poured) {
   std::vector<double> enthalpy;
+  enthalpy.reserve(body.volume().size());
   for (int i = 0; i < body.cells(); ++i)
     enthalpy.push_back(body.curve(body.layer_of(i)).enthalpy(body.layer_of(i) == body.metal() ? poured : 320));
   return enthalpy;
@@ -45,6 +46,7 @@ std::vector<double> start_of(const Body& body, double poured) {
 
 std::vector<double> scale_of(const Body& body) {
   std::vector<double> scale;
+  scale.reserve(body.volume().size());
   for (int i = 0; i < body.cells(); ++i) scale.push_back(body.layer_of(i) == body.metal() ? 1.2e9 : 1.0e9);
   return scale;
 }

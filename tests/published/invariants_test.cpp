@@ -162,6 +162,10 @@ TEST_CASE("Every case: freezing starts before it ends, from the surface inward",
       CHECK((std::isnan(r.end) || r.start <= r.end));
       CHECK((std::isnan(r.end) || r.end <= result.end_time));
     }
+    for (const freeze::ProbeReading& probe : result.probes) {
+      CAPTURE(probe.value.depth, probe.value.end, probe.error.end);
+      CHECK(std::isfinite(probe.value.end) == std::isfinite(probe.error.end));  // a time found has its error
+    }
     if (!cooled_from_one_side(shipped.section)) continue;
     for (std::size_t k = 1; k < readings.size(); ++k) {
       CAPTURE(readings[k - 1].depth, readings[k - 1].end, readings[k].depth, readings[k].end);

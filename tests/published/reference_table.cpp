@@ -47,7 +47,7 @@ ReferenceTable reference_table(const std::string& name) {
       table.heading = std::move(row);
       continue;
     }
-    if (row.size() != table.heading.size()) throw std::runtime_error(path + ": a row of wrong length: " + line);
+    if (row.size() != table.heading.size()) throw std::runtime_error("a row of wrong length in " + path);
     table.rows.push_back(std::move(row));
   }
   return table;

@@ -31,7 +31,7 @@ ExactCase linear_half_space(const std::string& name, const LinearAlloy& alloy, d
 /// Shell around the sink of a solution, from the exact profile at `begin` on: what the sink would take flows out
 /// through the bore. @param shape cylinder (line sink) or sphere (point sink)
 ExactCase shell_around_sink(const std::string& name, const LinearAlloy& alloy, const LinearFreezing& solution,
-                            heat::Shape shape, double bore_radius, double begin, double until);
+                            heat::Shape shape, double bore_radius, double about, double until);
 std::vector<ExactCase> freezing_range_cases();
 
 /// Half space of a binary alloy against its wall.

@@ -37,21 +37,32 @@ base::Table bore_flux(const LinearFreezing& solution, heat::Shape shape, double 
   return {time, flux};
 }
 
-struct Grid {
-  int cells;
-  double width;
-};
+/// Shell from the bore outward, from the exact profile at `begin` on.
+freeze::Section shell(const LinearAlloy& alloy, const LinearFreezing& solution, heat::Shape shape, double bore_radius,
+                      double begin, double until) {
+  freeze::Section s = section_of(alloy);
+  const double front = solution.end_front(until);
+  const double radius = solution.start_front(until) + reach(alloy.liquid, until);
+  const int exponent = static_cast<int>(shape);
+  s.shape = shape;
+  s.thickness = 2 * radius;
+  s.bore = 2 * bore_radius;
+  resolve_frozen_part(s, front - bore_radius, std::pow(front / radius, 1 + exponent));
+  s.start_profile = [solution, begin](double r) { return kelvin(solution.temperature(r, begin)); };
+  s.pouring_temperature = kelvin(solution.temperature(radius, begin));
+  s.inside.emplace();
+  s.inside->outer.kind = heat::Boundary::Kind::heat_flux;
+  s.inside->outer.heat_flux = bore_flux(solution, shape, bore_radius, begin, until);
+  s.stop.after = until - begin;
+  return s;
+}
 
-/// Even grid from the bore to about `radius`, with the default number of cells between the places of the
-/// end-of-freezing front at the beginning and the end of the run. At the beginning the front lies on a face of it and
-/// of its companion of half as many cells, so that every cell starts on one side of the arrest.
-Grid grid_around(const LinearFreezing& solution, double bore_radius, double begin, double until, double radius,
-                 const freeze::Section& section) {
-  const double first = solution.end_front(begin),
-               width = (solution.end_front(until) - first) / freeze::resolution_for(section).metal_cells;
-  const double frozen = 2 * std::max(1.0, std::round((first - bore_radius) / (2 * width)));
-  const double fitting = (first - bore_radius) / frozen;
-  return {2 * static_cast<int>(std::ceil((radius - bore_radius) / (2 * fitting))), fitting};
+/// Face of the section's grid next to a radius.
+double nearest_face(const freeze::Section& section, double radius) {
+  const freeze::Setup setup = freeze::set_up(section, freeze::resolution_for(section), freeze::metal_curve(section));
+  const std::vector<double>& face = setup.body->face();
+  return *std::min_element(face.begin(), face.end(),
+                           [radius](double a, double b) { return std::abs(a - radius) < std::abs(b - radius); });
 }
 
 }  // namespace
@@ -73,26 +84,17 @@ ExactCase linear_half_space(const std::string& name, const LinearAlloy& alloy, d
 }
 
 ExactCase shell_around_sink(const std::string& name, const LinearAlloy& alloy, const LinearFreezing& solution,
-                            heat::Shape shape, double bore_radius, double begin, double until) {
-  if (solution.end_front(begin) < bore_radius)
+                            heat::Shape shape, double bore_radius, double about, double until) {
+  if (solution.end_front(about) < bore_radius)
     throw std::domain_error("the bore must have frozen before the run begins");
-  ExactCase exact{name, section_of(alloy), {}};
+  // A cell starts with the temperature at its center, on one side of the arrest: the run begins as the front passes a
+  // face, or up to half a cell of latent heat would be misplaced.
+  const double face = nearest_face(shell(alloy, solution, shape, bore_radius, about, until), solution.end_front(about));
+  const double begin = solution.end_arrival(face);
+  ExactCase exact{name, shell(alloy, solution, shape, bore_radius, begin, until), {}};
   freeze::Section& s = exact.section;
-  s.shape = shape;
-  s.bore = 2 * bore_radius;
-  const Grid grid =
-      grid_around(solution, bore_radius, begin, until, solution.start_front(until) + reach(alloy.liquid, until), s);
-  s.cells = grid.cells;
-  const double radius = bore_radius + grid.cells * grid.width;
-  s.thickness = 2 * radius;
-  const double power = 1 + static_cast<int>(shape);
-  s.accuracy *= std::pow(solution.end_front(until) / radius, power);
-  s.start_profile = [solution, begin](double r) { return kelvin(solution.temperature(r, begin)); };
-  s.pouring_temperature = kelvin(solution.temperature(radius, begin));
-  s.inside.emplace();
-  s.inside->outer.kind = heat::Boundary::Kind::heat_flux;
-  s.inside->outer.heat_flux = bore_flux(solution, shape, bore_radius, begin, until);
-  s.stop.after = until - begin;
+  if (std::abs(nearest_face(s, face) - face) > 1e-6 * face) throw std::logic_error("the grid has moved with the start");
+  const double radius = s.thickness / 2;
   // Places that neither front has reached when the run begins, and that both pass.
   const double first = 1.2 * solution.start_front(begin), last = 0.95 * solution.end_front(until);
   const std::vector<double> places{first, 0.5 * (first + last), last};
