@@ -20,6 +20,10 @@ Profile::Profile(const heat::Body& body, const alloy::SolidificationPath& path)
       arrest_(body.metal_curve()),
       start_temperature_(path.liquidus() + (path.freezing_range() < kIsothermal ? kStartAbovePoint : 0.0)) {}
 
+bool Profile::has_center() const {
+  return metal_.begin == 0 && body_.face().front() <= 0 && body_.inner().kind == heat::Boundary::Kind::adiabatic;
+}
+
 Point Profile::point(double radius) const {
   const auto begin = body_.center().begin() + metal_.begin, end = body_.center().begin() + metal_.end;
   Point p;
@@ -90,8 +94,10 @@ double Profile::cell_fraction(const heat::StepView& step, int cell, double time)
   const double inside = body_.volume_inside(step.front_radius(front->solid_side, time));
   const double left = body_.volume_inside(body_.face()[c]), right = body_.volume_inside(body_.face()[c + 1]);
   const double share = std::clamp((front->solid_side > 0 ? right - inside : inside - left) / (right - left), 0.0, 1.0);
+  // What is not yet behind the front is mush, and holds what it had frozen already.
+  const double before = curve.fraction_solid(step.before().enthalpy[c]);
   const double mush = path_.fraction_above(std::max(center_temperature(step, cell, time), arrest_.temperature));
-  return share + (1 - share) * std::min(mush, curve.fraction_solid(arrest_.hot));
+  return share + (1 - share) * std::clamp(mush, std::min(before, 1.0), 1.0);
 }
 
 Profile::Node Profile::left_node(const heat::StepView& step, const Point& p, double time) const {

@@ -69,18 +69,27 @@ void Recorder::waves(const heat::StepView& step, double time) {
     to_start_[i] = profile_.to_start(step, walk_[i], time);
     to_end_[i] = profile_.to_end(step, walk_[i], time);
   }
-  // A stretch of metal on which a measure goes from a to b counts for the share on which it is below zero.
-  const auto share_below = [](double a, double b) {
+  // A stretch of metal between two faces counts for the share on which a measure is below zero. The measure may bend
+  // within it, so where its sign changes the place is found by halving.
+  const auto share_below = [&](std::size_t i, double a, double b, const auto& measure) {
     if (a <= 0 && b <= 0) return 1.0;
     if (a > 0 && b > 0) return 0.0;
-    return (a <= 0 ? a : b) / (a <= 0 ? a - b : b - a);
+    double low = 0, high = 1;
+    for (int k = 0; k < 20; ++k) {
+      const double mid = 0.5 * (low + high);
+      const double radius = walk_[i - 1].radius + mid * (walk_[i].radius - walk_[i - 1].radius);
+      ((measure(profile_.point(radius)) <= 0) == (a <= 0) ? low : high) = mid;
+    }
+    return a <= 0 ? low : 1 - low;
   };
   double started = 0, frozen = 0, started_from_surface = 0, frozen_from_surface = 0;
   bool start_open = true, end_open = true;
   for (std::size_t i = 1; i < walk_.size(); ++i) {
     const double length = std::abs(walk_[i].radius - walk_[i - 1].radius);
-    const double start = length * share_below(to_start_[i - 1], to_start_[i]);
-    const double end = length * share_below(to_end_[i - 1], to_end_[i]);
+    const double start = length * share_below(i, to_start_[i - 1], to_start_[i],
+                                              [&](const Point& p) { return profile_.to_start(step, p, time); });
+    const double end = length * share_below(i, to_end_[i - 1], to_end_[i],
+                                            [&](const Point& p) { return profile_.to_end(step, p, time); });
     started += start;
     frozen += end;
     if (start_open) started_from_surface += start;

@@ -43,6 +43,7 @@ Watch::Watch(const Profile& profile, const std::vector<double>& radius)
       last_radius_(kNever),
       met_radius_(kNever) {
   for (const double r : radius) points_.push_back(profile.point(r));
+  if (profile.has_center()) center_ = profile.point(0);
 }
 
 void Watch::look(const heat::StepView& step) {
@@ -81,25 +82,30 @@ void Watch::look_at_whole(const heat::StepView& step) {
   }
   int last = -1;
   double latest = 0;
-  for (int i = cells.begin; i < cells.end; ++i) {
-    const double left = profile_.liquid_left(step, i, step.end());
-    if (left > 0) {
-      frozen_ = last_radius_ = kNever;
-      return;
-    }
-    if (std::isfinite(frozen_)) continue;
-    const auto f = [&](double t) { return profile_.liquid_left(step, i, t); };
-    const double before = f(step.begin());
-    const double t = before > 0 ? falls_through_zero(f, step.begin(), step.end(), before, left) : step.begin();
-    if (last < 0 || t > latest) {
-      last = i;
-      latest = t;
-    }
+  bool all = true;
+  const auto gone = [&](int cell, const auto& liquid) {
+    const double after = liquid(step.end());
+    all = all && after <= 0;
+    if (!all || std::isfinite(frozen_)) return;
+    const double before = liquid(step.begin());
+    if (!(before > 0)) return;
+    const double t = falls_through_zero(liquid, step.begin(), step.end(), before, after);
+    if (last >= 0 && t <= latest) return;
+    last = cell;
+    latest = t;
+  };
+  for (int i = cells.begin; i < cells.end && all; ++i)
+    gone(i, [&](double t) { return profile_.liquid_left(step, i, t); });
+  // The center of symmetry is a little hotter than the middle of its cell.
+  if (center_ && all) gone(cells.begin, [&](double t) { return profile_.to_end(step, *center_, t); });
+  if (!all) {
+    frozen_ = last_radius_ = kNever;
+    return;
   }
   if (last < 0) return;
   frozen_ = latest;
   const heat::Body& body = step.body();
-  const bool at_center = last == 0 && body.inner().kind == heat::Boundary::Kind::adiabatic;
+  const bool at_center = center_ && last == cells.begin;
   const bool met_here = std::isfinite(met_radius_) && profile_.point(met_radius_).cell == last;
   last_radius_ = at_center ? body.face()[0] : met_here ? met_radius_ : body.center()[static_cast<std::size_t>(last)];
 }

@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <utility>
 
 namespace palier::heat {
 
@@ -83,7 +84,7 @@ Terminal FlowField<Real>::terminal(int l, int cell, int side, const std::vector<
     const double k = solid ? a.solid_conductivity : a.liquid_conductivity;
     t.temperature = a.temperature;
     t.resistance = std::max(depth, 0.0) / k;
-    t.resistance_slope = depth > 0 ? -side * p.radius_slope / k : 0.0;
+    t.resistance_slope = depth > 0 ? -side * p.flow_radius_slope / k : 0.0;
     return t;
   }
   const alloy::EnthalpyCurve& curve = b.curve(b.layer_of(cell));
@@ -150,7 +151,7 @@ void FlowField<Real>::boundary(int l, int side, double time, const std::vector<R
         // The flux to a front at the very face has no bound; a tenth of a half cell is where this stops.
         const double least = 0.1 * b.half_width(cell);
         distance = std::max(depth, least);
-        distance_slope = depth > least ? -side * p.radius_slope : 0.0;
+        distance_slope = depth > least ? -side * p.flow_radius_slope : 0.0;
       }
       flow.flux = (lane(theta_[i], l) - wall) / distance;
       flow.by_first = (lane(theta_slope_[i], l) - flow.flux * distance_slope) / distance;
@@ -182,33 +183,57 @@ void FlowField<Real>::front_flows(int l, const Front& front, const std::vector<R
   }
 }
 
-/// excess = -1/2 C_s/k_s q_s a phi + 1/2 C_l/k_l q_l b (1 - phi): the mean of straight profiles on both sides of the
-/// front, a and b the depths of the two parts, q_s and q_l the flux toward the solid side on either side of the front.
+/// excess = phi C_s dT_s + (1 - phi) [H(T + dT_l) - H_hot],  dT_s = -1/2 q_s a/k_s,  dT_l = +1/2 q_l b/k_l:
+/// the means of straight profiles on both sides of the front, a and b the depths of the two parts, q_s and q_l the flux
+/// toward the solid side on either side of the front, H the enthalpy above the arrest.
 template <class Real>
 FrontExcess FlowField<Real>::front_excess(int l, const Front& front, double unknown) const {
   const Body& b = body(l);
-  const LastArrest& arrest_of_lane = arrest(l);
-  const FrontPlace p = place(b, arrest_of_lane, front, unknown);
+  const LastArrest& a = arrest(l);
+  const FrontPlace p = place(b, a, front, unknown);
   const int s = front.solid_side;
-  const double share_slope = -1 / (arrest_of_lane.hot - arrest_of_lane.cold);
+  const double share_slope = -1 / (a.hot - a.cold);
   FrontExcess e;
-  const auto add = [&](int side, double depth, double share, double share_change, double factor) {
+  const auto add = [&](int side, double depth, double share, double share_change, double half_per_k, const auto& heat) {
     const auto face = static_cast<std::size_t>(side > 0 ? front.cell + 1 : front.cell);
     const double area = b.area()[face];
     if (!(area > 0)) return;  // the center of a cylinder or sphere: nothing flows
     const double flux = s * lane(flow_[face], l) / area;
     const double by_self = s * lane((side > 0 ? by_inner_ : by_outer_)[face], l) / area;
     const double by_neighbor = s * lane((side > 0 ? by_outer_ : by_inner_)[face], l) / area;
-    const double depth_slope = -side * p.radius_slope;
-    e.excess += factor * share * depth * flux;
-    e.by_self += factor * (share_change * depth * flux + share * depth_slope * flux + share * depth * by_self);
-    (side > 0 ? e.by_right : e.by_left) += factor * share * depth * by_neighbor;
+    const double depth_slope = -side * p.flow_radius_slope;
+    const auto [held, capacity] = heat(half_per_k * depth * flux);
+    e.excess += share * held;
+    e.by_self += share_change * held + share * capacity * half_per_k * (depth_slope * flux + depth * by_self);
+    (side > 0 ? e.by_right : e.by_left) += share * capacity * half_per_k * depth * by_neighbor;
   };
-  add(s, p.solid_depth, p.solid_share, share_slope,
-      -0.5 * arrest_of_lane.solid_capacity / arrest_of_lane.solid_conductivity);
-  add(-s, p.liquid_depth, 1 - p.solid_share, -share_slope,
-      0.5 * arrest_of_lane.liquid_capacity / arrest_of_lane.liquid_conductivity);
+  add(s, p.solid_depth, p.solid_share, share_slope, -0.5 / a.solid_conductivity,
+      [&](double dT) { return std::pair(a.solid_capacity * dT, a.solid_capacity); });
+  add(-s, p.liquid_depth, 1 - p.solid_share, -share_slope, 0.5 / a.liquid_conductivity, [&](double dT) {
+    const double T = a.temperature + std::max(dT, 0.0), capacity = a.hot_enthalpy.slope(T);
+    return std::pair(a.hot_enthalpy(T) - a.hot + std::min(dT, 0.0) * capacity, capacity);
+  });
   return e;
+}
+
+/// The unknown with which a front in a cell makes up the cell's enthalpy; nothing where none within reach does.
+template <class Real>
+std::optional<double> FlowField<Real>::unknown_for(int l, const Front& front, double enthalpy, double lowest,
+                                                   double highest, double time, const std::vector<Real>& unknowns,
+                                                   const Fronts& fronts) {
+  const auto surplus = [&](double unknown) {
+    return unknown + excess_of(l, front, unknown, time, unknowns, fronts).excess - enthalpy;
+  };
+  double a = lowest, b = highest, fa = surplus(a), fb = surplus(b);
+  if (fa > 0 || fb < 0) return std::nullopt;
+  for (int i = 0; i < 30 && b - a > 1e-9 * (highest - lowest); ++i) {  // regula falsi, every third step a halving
+    double u = i % 3 == 2 ? 0.5 * (a + b) : b - fb * (b - a) / (fb - fa);
+    if (!(u > a && u < b)) u = 0.5 * (a + b);
+    const double f = surplus(u);
+    (f > 0 ? b : a) = u;
+    (f > 0 ? fb : fa) = f;
+  }
+  return 0.5 * (a + b);
 }
 
 template <class Real>

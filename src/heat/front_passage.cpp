@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <optional>
 
 namespace palier::heat {
 
@@ -50,15 +51,14 @@ void FrontPassage<Real>::hand_over(Stage<Real>& stage, int l, const Front& f, do
     return;
   }
   pass_on_debt(stage, l, f.cell, next, f.solid_side);
+  // A neighbor that is still too hot for a front has to cool as a cell of its own first.
   const Front ahead{next, f.solid_side};
-  const double enthalpy = next_unknown;
-  double guess = std::clamp(enthalpy, arrest.cold, arrest.hot);
-  for (int i = 0; i < 3; ++i) {
-    guess = enthalpy - field_.excess_of(l, ahead, guess, time, stage.unknown, fronts).excess;
-    guess = std::clamp(guess, arrest.cold, arrest.hot - 0.9 * kHandBack * (arrest.hot - arrest.cold));
+  const double furthest_back = arrest.hot - 0.9 * kHandBack * (arrest.hot - arrest.cold);
+  if (const std::optional<double> place =
+          field_.unknown_for(l, ahead, next_unknown, arrest.cold, furthest_back, time, stage.unknown, fronts)) {
+    next_unknown = *place;
+    fronts.add(ahead);
   }
-  next_unknown = guess;
-  fronts.add(ahead);
 }
 
 /// What the solid just behind a front gains per volume and time as the step begins.
@@ -144,15 +144,13 @@ void FrontPassage<Real>::adopt(State<Real>& state, const Real& time) {
       const bool cooled = side * lane(state.flow[static_cast<std::size_t>(side > 0 ? cell + 1 : cell)], l) > 0;
       if ((share < kAdoptFrom && !at_wall) || share > 1 || !liquid_ahead || !cooled) continue;
       const Front front{cell, side};
-      double guess = H;
-      for (int i = 0; i < 5; ++i)
-        guess = std::clamp(H - field_.excess_of(l, front, guess, lane(time, l), state.unknown, fronts).excess,
-                           arrest.cold, arrest.hot);
-      if (guess <= arrest.cold || guess >= arrest.hot) continue;
-      lane(state.unknown[static_cast<std::size_t>(cell)], l) = guess;
+      const std::optional<double> guess =
+          field_.unknown_for(l, front, H, arrest.cold, arrest.hot, lane(time, l), state.unknown, fronts);
+      if (!guess) continue;
+      lane(state.unknown[static_cast<std::size_t>(cell)], l) = *guess;
       fronts.add(front);
       state.marks[static_cast<std::size_t>(l)].front_radius[side > 0 ? 1 : 0] =
-          place(field_.body(l), arrest, front, guess).radius;
+          place(field_.body(l), arrest, front, *guess).radius;
     }
   }
 }

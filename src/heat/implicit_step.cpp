@@ -110,7 +110,7 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
     for (const int side : {-1, +1}) {
       const Front* before = from.fronts[static_cast<std::size_t>(l)].with_solid_side(side);
       if (!before) continue;
-      const int last = last_swept(l, *before, from.fronts[static_cast<std::size_t>(l)]);
+      const int last = last_swept(l, *before);
       share_error(l, before->cell, last);
     }
   if (getenv("DBG") && stage_.fronts[0].count) {
@@ -129,17 +129,17 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
   return report;
 }
 
-/// The cell in which a front that was there at the begin of the step is now. One that ended swept all there was, up to
-/// the other front if that lives or lived.
+/// The cell in which a front that was there at the begin of the step is now. Where it has ended, or was let go before a
+/// neighbor still too hot for it: the first cell on its way that is not solid, or the end of the metal.
 template <class Real>
-int ImplicitStep<Real>::last_swept(int l, const Front& before, const Fronts& all_before) const {
-  const Fronts& now = stage_.fronts[static_cast<std::size_t>(l)];
+int ImplicitStep<Real>::last_swept(int l, const Front& before) const {
   const int side = before.solid_side;
-  if (const Front* still = now.with_solid_side(side)) return still->cell;
-  if (const Front* other = now.with_solid_side(-side)) return other->cell + side;
-  if (const Front* met = all_before.with_solid_side(-side)) return met->cell;
+  if (const Front* still = stage_.fronts[static_cast<std::size_t>(l)].with_solid_side(side)) return still->cell;
   const LayerCells metal = field_.body(l).metal_cells();
-  return side > 0 ? metal.begin : metal.end - 1;
+  const int end = side > 0 ? metal.begin : metal.end - 1;
+  int cell = before.cell;
+  while (cell != end && lane(stage_.unknown[static_cast<std::size_t>(cell)], l) < field_.arrest(l).cold) cell -= side;
+  return cell;
 }
 
 /// Cells swept by a front share one mean error. Each alone has a kink in time where the front came or went, so its own

@@ -119,6 +119,13 @@ double March::time_to_last_liquid() const {
   return pace > 0 ? volume_left(where.radius) / pace : never;
 }
 
+bool March::all_solid(const State<double>& state) const {
+  const LayerCells metal = body_.metal_cells();
+  const auto first = state.unknown.begin();
+  return state.fronts[0].count == 0 &&
+         std::all_of(first + metal.begin, first + metal.end, [this](double H) { return H <= arrest_.cold; });
+}
+
 const StepView& March::step(double limit) {
   const State<double>& from = states_[current_];
   State<double>& to = states_[1 - current_];
@@ -144,7 +151,7 @@ const StepView& March::step(double limit) {
       view_.middle_ = step_.middle_marks(0);
       view_.begin_ = begin;
       view_.end_ = begin + h;
-      view_.last_liquid_ = from.fronts[0].count > 0 && to.fronts[0].count == 0 && std::isfinite(to_last)
+      view_.last_liquid_ = from.fronts[0].count > 0 && all_solid(to) && std::isfinite(to_last)
                                ? std::min(begin + to_last, begin + h)
                                : std::numeric_limits<double>::quiet_NaN();
       heat_out_ += step_.heat_out(0, from, to, h);

@@ -37,6 +37,8 @@ class Profile {
   /// Positive while the cell holds liquid.
   double liquid_left(const heat::StepView& step, int cell, double time) const;
 
+  /// Whether the metal reaches to a center of symmetry, at radius 0.
+  bool has_center() const;
   double start_temperature() const { return start_temperature_; }
   const heat::LayerCells& cells() const { return metal_; }
 

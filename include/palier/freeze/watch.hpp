@@ -1,6 +1,7 @@
 // Watches points of the metal during a march and notes when freezing starts and ends there.
 #pragma once
 
+#include <optional>
 #include <vector>
 
 #include "palier/freeze/profile.hpp"
@@ -28,6 +29,7 @@ class Watch {
 
   const Profile& profile_;
   std::vector<Point> points_;
+  std::optional<Point> center_;  ///< of symmetry
   std::vector<double> start_, end_;
   std::vector<char> started_, ended_;
   double frozen_, last_radius_;

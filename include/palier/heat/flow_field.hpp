@@ -2,6 +2,7 @@
 #pragma once
 
 #include <array>
+#include <optional>
 #include <vector>
 
 #include "palier/base/lanes.hpp"
@@ -52,6 +53,10 @@ class FlowField {
   /// Excess that a front would have, with the neighbors as they are at the last evaluation. Slower; for hand-overs.
   FrontExcess excess_of(int lane, const Front& front, double unknown, double time, const std::vector<Real>& unknowns,
                         const Fronts& fronts);
+
+  /// The unknown between two bounds with which a front in a cell makes up the cell's enthalpy; nothing where none does.
+  std::optional<double> unknown_for(int lane, const Front& front, double enthalpy, double lowest, double highest,
+                                    double time, const std::vector<Real>& unknowns, const Fronts& fronts);
 
  private:
   Terminal terminal(int lane, int cell, int side, const std::vector<Real>& unknown, const Fronts& fronts) const;

@@ -2,8 +2,8 @@
 #pragma once
 
 #include <array>
-#include <cmath>
 
+#include "palier/base/table.hpp"
 #include "palier/heat/body.hpp"
 
 namespace palier::heat {
@@ -49,14 +49,18 @@ struct LastArrest {
   double potential = 0;                                    ///< [W/m]
   double cold = 0, hot = 0;                                ///< enthalpy completed and begun [J/m3]
   double solid_conductivity = 0, liquid_conductivity = 0;  ///< on both sides [W/m/K]
-  double solid_capacity = 0, liquid_capacity = 0;          ///< dH/dT on both sides [J/m3/K]
+  double solid_capacity = 0;                               ///< dH/dT just below [J/m3/K]
+  base::Table hot_enthalpy;                                ///< enthalpy over temperature above [J/m3]
 };
 
 /// Where a front lies in its cell and how that changes with its unknown.
 struct FrontPlace {
-  double solid_share = 0;                    ///< of the cell's volume
-  double radius = 0, radius_slope = 0;       ///< of the front [m]
-  double solid_depth = 0, liquid_depth = 0;  ///< from the front to the cell's face on either side [m]
+  double solid_share = 0;  ///< of the cell's volume
+  double radius = 0;       ///< of the front [m]
+  /// From where the flows are taken, with its change per unknown: the front, but not all the way to the center of a
+  /// cylinder or sphere, where the flow to a front of vanishing radius vanishes and the front would never get there.
+  double flow_radius = 0, flow_radius_slope = 0;
+  double solid_depth = 0, liquid_depth = 0;  ///< from there to the cell's face on either side [m]
 };
 FrontPlace place(const Body& body, const LastArrest& arrest, const Front& front, double unknown);
 

@@ -60,7 +60,7 @@ class ImplicitStep {
   void predict(const std::vector<Real>& rate, const Real& time, const Real& length);
   void set_rate(const std::vector<Real>& before, const LaneFronts<Real>& fronts_before, const Real& length);
   Marks marks(int lane) const;
-  int last_swept(int lane, const Front& before, const Fronts& all_before) const;
+  int last_swept(int lane, const Front& before) const;
   void share_error(int lane, int first, int last);
   double error_norm(int lane) const;
   /// Divergence of flow: what a cell gains per time and volume.

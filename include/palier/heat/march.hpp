@@ -70,6 +70,7 @@ class March {
 
  private:
   double heat() const;
+  bool all_solid(const State<double>& state) const;
   /// Time the front now in the metal needs for the liquid left at its present rate [s]; infinite if there is none or
   /// two.
   double time_to_last_liquid() const;
