@@ -167,11 +167,15 @@ std::string accuracy_missed(double reached, double asked) {
   return text.str();
 }
 
-/// Half widths of the ± of times. What coarsening by two changed is three times the error left where the order is two,
-/// once where it is one; a half covers what lies between. By chance a single time may change little: none is trusted
-/// more, relative to its size, than the median of its kind.
-std::vector<double> numerical_errors(const std::vector<double>& fine, const std::vector<double>& coarse) {
-  constexpr double kShare = 0.5;
+/// Shares of what coarsening by two changed that are claimed as error. The change is three times the error left where
+/// the order is two, once where it is one. The front of an arrest is followed and of order two; liquidus, and solidus
+/// without an arrest, pass through cells that are not looked into, and are of order one to two.
+constexpr double kShareOfFollowed = 0.5;
+constexpr double kShareOfOthers = 1.2;
+
+/// Half widths of the ± of times. By chance a single time may change little: none is trusted more, relative to its
+/// size, than the median of its kind.
+std::vector<double> numerical_errors(const std::vector<double>& fine, const std::vector<double>& coarse, double share) {
   std::vector<double> relative;
   for (std::size_t k = 0; k < fine.size(); ++k) {
     const double change = std::abs(fine[k] - coarse[k]) / fine[k];
@@ -185,7 +189,7 @@ std::vector<double> numerical_errors(const std::vector<double>& fine, const std:
   }
   std::vector<double> errors;
   for (std::size_t k = 0; k < fine.size(); ++k)
-    errors.push_back(kShare * std::max(std::abs(fine[k] - coarse[k]), typical * std::abs(fine[k])));
+    errors.push_back(share * std::max(std::abs(fine[k] - coarse[k]), typical * std::abs(fine[k])));
   return errors;
 }
 
@@ -204,17 +208,21 @@ struct Judged {
   double solidification_time_error;
 };
 
-Judged judge(const Outcome& fine, const Outcome& coarse) {
-  const auto errors_of = [&](double Reading::*time, bool with_whole) {
+Judged judge(const Outcome& fine, const Outcome& coarse, const alloy::SolidificationPath& path) {
+  const auto errors_of = [&](double Reading::*time, bool with_whole, double share) {
     std::vector<double> a, b;
     for (const Reading& probe : fine.probes) a.push_back(probe.*time);
     for (const Reading& probe : coarse.probes) b.push_back(probe.*time);
     a.push_back(with_whole ? fine.frozen : kNever);
     b.push_back(with_whole ? coarse.frozen : kNever);
-    return numerical_errors(a, b);
+    return numerical_errors(a, b, share);
   };
-  const std::vector<double> start = errors_of(&Reading::start, false), end = errors_of(&Reading::end, true),
-                            local = errors_of(&Reading::local_solidification_time, false);
+  const bool followed = !path.arrests().empty() && path.arrests().back().temperature == path.end_of_freezing();
+  const double start_share = path.freezing_range() > 0 ? kShareOfOthers : kShareOfFollowed;
+  const double end_share = followed ? kShareOfFollowed : kShareOfOthers;
+  const std::vector<double> start = errors_of(&Reading::start, false, start_share),
+                            end = errors_of(&Reading::end, true, end_share),
+                            local = errors_of(&Reading::local_solidification_time, false, start_share);
   Judged j;
   for (std::size_t k = 0; k < fine.probes.size(); ++k)
     j.probes.push_back({fine.probes[k], {fine.probes[k].depth, start[k], end[k], local[k]}});
@@ -256,13 +264,13 @@ Result run(const Section& section, const Progress& progress) {
                  [&, from, to](double t) { tell(from + (to - from) * std::min(1.0, t / duration)); });
   };
   Outcome out = fine_march(0.1, 0.9);
-  Judged judged = judge(out, coarse);
+  Judged judged = judge(out, coarse, *section.path);
   // Where the companion says that the accuracy asked for was missed, the run becomes the companion of a finer one.
   for (int k = 0; k < kMostRefinements && !set_by_hand(section) && worst(judged, duration) > section.accuracy; ++k) {
     resolution = refined(resolution);
     coarse = std::move(out);
     out = fine_march(0.9, 1);
-    judged = judge(out, coarse);
+    judged = judge(out, coarse, *section.path);
   }
 
   Result r;

@@ -63,8 +63,8 @@ TEST_CASE("Alloy similarity: order in the cell width", "[exact][alloy][order]") 
         result, [&](double depth) { return solution.start_arrival(depth); }, 0.4 * front, 0.95 * front));
   }
   // At the liquidus, and at a solidus without arrest, the slope of T(H) jumps within a cell that is not looked into:
-  // first order at least; second where it fades beside what is smooth. Scheil's path ends in an arrest, whose front is
-  // followed.
-  check_order(ends, rule == BinaryAlloy::Rule::scheil ? 1.4 : 0.9, 2.5);
-  check_order(starts, 0.9, 2.5);
+  // first order at least, with an error that swings with where the cells lie. At a held face the start-up of the first
+  // cell adds an error that falls faster than the second order.
+  check_order(ends, 0.9, 3.2);
+  check_order(starts, 0.9, 3.2);
 }

@@ -32,7 +32,7 @@ TEST_CASE("Inward freezing: order in the cell width", "[exact][inward][order]") 
     ExactCase exact = inward_freezing(row);
     exact.section.accuracy = 1e-5;
     std::vector<double> errors;
-    for (const int cells : {10, 20, 40}) {
+    for (const int cells : {20, 40, 80}) {
       exact.section.cells = cells;
       errors.push_back(std::abs(freeze::run(exact.section).solidification_time / exact.times.front().time - 1));
     }

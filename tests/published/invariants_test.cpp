@@ -127,7 +127,9 @@ TEST_CASE("Every case: fraction solid stays within 0 and 1 and falls only where 
     }
     const Fall worst = worst_fall(h);
     CAPTURE(worst.time, worst.cell, worst.temperature);
-    CHECK(worst.by <= 1e-9);
+    // A step is solved to 1e-6 of the metal's heat (a tenth of its tolerance); what a cell ahead of a front loses and
+    // regains within that is no melting.
+    CHECK(worst.by <= 1e-6);
   }
 }
 
