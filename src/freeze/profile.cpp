@@ -18,7 +18,39 @@ Profile::Profile(const heat::Body& body, const alloy::SolidificationPath& path)
       path_(path),
       metal_(body.metal_cells()),
       arrest_(body.metal_curve()),
-      start_temperature_(path.liquidus() + (path.freezing_range() < kIsothermal ? kStartAbovePoint : 0.0)) {}
+      start_temperature_(path.liquidus() + (path.freezing_range() < kIsothermal ? kStartAbovePoint : 0.0)),
+      start_enthalpy_(body.metal_curve().enthalpy(start_temperature_)) {}
+
+Profile::Sure Profile::started(const heat::StepView& step) const {
+  const auto first = step.before().enthalpy.begin() + metal_.begin, last = step.before().enthalpy.begin() + metal_.end;
+  const auto then = std::minmax_element(first, last);
+  const auto now =
+      std::minmax_element(step.after().enthalpy.begin() + metal_.begin, step.after().enthalpy.begin() + metal_.end);
+  const heat::Marks &a = step.before().marks[0], &b = step.after().marks[0];
+  const double coldest_face = std::min({a.inner_surface, a.outer_surface, b.inner_surface, b.outer_surface});
+  const double hottest_face = std::max({a.inner_surface, a.outer_surface, b.inner_surface, b.outer_surface});
+  // What is read between cells, faces and the ends of the step lies within a margin of what they have.
+  const double margin = 0.02 * std::abs(start_enthalpy_ - body_.metal_curve().end_of_freezing_enthalpy()) + 1.0;
+  const double margin_T = 1.0;
+  if (std::min(*then.first, *now.first) > start_enthalpy_ + margin && coldest_face > start_temperature_ + margin_T)
+    return Sure::none;
+  if (std::max(*then.second, *now.second) < start_enthalpy_ - margin && hottest_face < start_temperature_ - margin_T)
+    return Sure::all;
+  return Sure::unknown;
+}
+
+bool Profile::surely_none_solid(const heat::StepView& step) const {
+  const heat::Marks &a = step.before().marks[0], &b = step.after().marks[0];
+  const double coldest_face = std::min({a.inner_surface, a.outer_surface, b.inner_surface, b.outer_surface});
+  if (coldest_face <= path_.end_of_freezing() + 1.0) return false;
+  if (step.before().fronts[0].count + step.after().fronts[0].count > 0) return false;
+  const double solid = arrest_.exists ? arrest_.hot : body_.metal_curve().end_of_freezing_enthalpy();
+  const double margin = 0.02 * std::abs(start_enthalpy_ - solid);
+  for (const heat::State<double>* state : {&step.before(), &step.after()})
+    for (int i = metal_.begin; i < metal_.end; ++i)
+      if (state->enthalpy[static_cast<std::size_t>(i)] <= solid + margin) return false;
+  return true;
+}
 
 bool Profile::has_center() const {
   return metal_.begin == 0 && body_.face().front() <= 0 && body_.inner().kind == heat::Boundary::Kind::adiabatic;

@@ -65,9 +65,12 @@ void Recorder::row(const heat::StepView& step, double time) {
 
 /// Positions where freezing has started and ended, seen from the surface, and the width between them over the section.
 void Recorder::waves(const heat::StepView& step, double time) {
+  const Profile::Sure begun = profile_.started(step);
+  const bool none_solid = profile_.surely_none_solid(step);
   for (std::size_t i = 0; i < walk_.size(); ++i) {
-    to_start_[i] = profile_.to_start(step, walk_[i], time);
-    to_end_[i] = profile_.to_end(step, walk_[i], time);
+    to_start_[i] = begun == Profile::Sure::unknown ? profile_.to_start(step, walk_[i], time)
+                                                   : (begun == Profile::Sure::none ? 1.0 : -1.0);
+    to_end_[i] = none_solid ? 1.0 : profile_.to_end(step, walk_[i], time);
   }
   // A stretch of metal between two faces counts for the share on which a measure is below zero. The measure may bend
   // within it, so where its sign changes the place is found by halving.

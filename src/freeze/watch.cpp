@@ -48,9 +48,11 @@ Watch::Watch(const Profile& profile, const std::vector<double>& radius)
 
 void Watch::look(const heat::StepView& step) {
   const double a = step.begin(), b = step.end();
+  const bool none_started = profile_.started(step) == Profile::Sure::none;
+  const bool none_solid = profile_.surely_none_solid(step);
   for (std::size_t k = 0; k < points_.size(); ++k) {
     const Point& p = points_[k];
-    if (!started_[k]) {
+    if (!started_[k] && !none_started) {
       const auto f = [&](double t) { return profile_.to_start(step, p, t); };
       const double fb = f(b);
       if (fb <= 0) {
@@ -59,7 +61,7 @@ void Watch::look(const heat::StepView& step) {
         start_[k] = fa > 0 ? falls_through_zero(f, a, b, fa, fb) : a;
       }
     }
-    if (!started_[k]) continue;
+    if (!started_[k] || (none_solid && !ended_[k])) continue;
     const auto g = [&](double t) { return profile_.to_end(step, p, t); };
     const double gb = g(b);
     if (gb <= 0 && !ended_[k]) {
@@ -71,7 +73,10 @@ void Watch::look(const heat::StepView& step) {
       end_[k] = kNever;
     }
   }
-  look_at_whole(step);
+  if (none_solid)
+    frozen_ = last_radius_ = kNever;
+  else
+    look_at_whole(step);
 }
 
 void Watch::look_at_whole(const heat::StepView& step) {

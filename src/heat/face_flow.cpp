@@ -78,17 +78,21 @@ FaceFlow contact_flow(const Contact& contact, const Terminal& a, const Terminal&
 
 FaceFlow film_flow(const Boundary& film, const Terminal& a) {
   const double ambient = film.temperature, radiation = film.emissivity * kStefanBoltzmann;
+  const auto taken = [&](double T) {
+    const double square = T * T, ambient_square = ambient * ambient;
+    return film.film_coefficient * (T - ambient) + radiation * (square * square - ambient_square * ambient_square);
+  };
   // Newton from the cell's temperature: the flux leaving is convex and rising in Ts, so it converges from above.
   double Ts = a.temperature, q = 0, slope = 0;
   for (int i = 0; i < kIterations; ++i) {
-    q = film.film_coefficient * (Ts - ambient) + radiation * (std::pow(Ts, 4) - std::pow(ambient, 4));
+    q = taken(Ts);
     slope = film.film_coefficient + 4 * radiation * Ts * Ts * Ts;
     const double step = (Ts - a.temperature + a.resistance * q) / (1 + a.resistance * slope);
     Ts -= step;
     if (std::abs(step) <= 1e-13 * std::abs(Ts)) break;
   }
   FaceFlow f;
-  f.flux = film.film_coefficient * (Ts - ambient) + radiation * (std::pow(Ts, 4) - std::pow(ambient, 4));
+  f.flux = taken(Ts);
   f.by_first = (a.temperature_slope - f.flux * a.resistance_slope) * slope / (1 + a.resistance * slope);
   f.surface = Ts;
   return f;

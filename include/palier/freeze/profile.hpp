@@ -34,6 +34,11 @@ class Profile {
   double to_end(const heat::StepView& step, const Point& p, double time) const;
   /// Fraction solid at the point.
   double fraction_solid(const heat::StepView& step, const Point& p, double time) const;
+  /// Whether no point of the metal has come down to the start, all have, or neither is sure; likewise whether none is
+  /// solid yet. Cheap, from cells and faces alone, at the end of a step: lets others skip what cannot have happened.
+  enum class Sure { none, all, unknown };
+  Sure started(const heat::StepView& step) const;
+  bool surely_none_solid(const heat::StepView& step) const;
   /// Positive while the cell holds liquid.
   double liquid_left(const heat::StepView& step, int cell, double time) const;
 
@@ -55,7 +60,7 @@ class Profile {
   const alloy::SolidificationPath& path_;
   heat::LayerCells metal_;
   heat::LastArrest arrest_;
-  double start_temperature_;
+  double start_temperature_, start_enthalpy_;
 };
 
 }  // namespace palier::freeze
