@@ -46,7 +46,7 @@ SolidificationPath::SolidificationPath(Parts parts) : parts_(std::move(parts)) {
 }
 
 double SolidificationPath::fraction_above(double T) const {
-  if (T > parts_.liquidus) return 0.0;
+  if (T >= parts_.liquidus) return 0.0;
   if (T < parts_.end_of_freezing) return 1.0;
   return parts_.fraction_above(T);
 }
@@ -54,7 +54,7 @@ double SolidificationPath::fraction_above(double T) const {
 double SolidificationPath::fraction_below(double T) const {
   if (T > parts_.liquidus) return 0.0;
   if (T < parts_.end_of_freezing) return 1.0;
-  return parts_.fraction_above(T) + arrest_at(parts_.arrests, T);
+  return fraction_above(T) + arrest_at(parts_.arrests, T);
 }
 
 std::optional<SoluteState> SolidificationPath::solute(double T) const {

@@ -56,8 +56,19 @@ int dispatch(int argc, char** argv) {
   run_command->add_option("-o,--output", run_options.output, "Result file (HDF5, also netCDF-4); none unless given");
   run_command->add_flag("--json", run_options.json, "Answer as JSON instead of a table");
   run_command->add_flag("--quiet", run_options.quiet, "No progress bar");
+  AlloyOptions alloy_options;
+  CLI::App* alloy_command = program.add_subcommand(
+      "alloy",
+      "How an alloy freezes: liquidus, end of freezing by each rule, arrests with their fractions.\n"
+      "Example: palier alloy Al-4.5Cu --composition 'Cu 5 %' --table");
+  alloy_command->add_option("NAME", alloy_options.name, "Alloy of the library or beside, or a file ending in .yaml")
+      ->required();
+  alloy_command->add_option("--composition", alloy_options.composition, "Such as 'Cu 5 %'; default: that of the file");
+  alloy_command->add_option("--path", alloy_options.rule, "Rule told in detail; default: that of the file");
+  alloy_command->add_flag("--table", alloy_options.table, "Add fraction solid against temperature");
+  alloy_command->add_flag("--json", alloy_options.json, "Answer as JSON instead of a table");
   std::string library;
-  for (CLI::App* command : {check_command, run_command})
+  for (CLI::App* command : {check_command, run_command, alloy_command})
     command->add_option("--library", library, "Folder with alloys/ and molds/; default: the shipped cases");
 
   if (const std::string wrong = wrong_command(program, argc, argv); !wrong.empty()) throw base::InputError(wrong);
@@ -75,7 +86,10 @@ int dispatch(int argc, char** argv) {
     return done;
   }
   const std::string folder = library.empty() ? library_folder() : library;
-  if (check_command->parsed()) {
+  if (alloy_command->parsed()) {
+    alloy_options.library = folder;
+    show_alloy(alloy_options);
+  } else if (check_command->parsed()) {
     if (check_options.case_file.empty()) throw base::InputError("palier check needs a CASE\nSee palier check --help");
     check_options.library = folder;
     check(check_options);

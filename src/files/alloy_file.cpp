@@ -82,6 +82,21 @@ void read_freezing(const MapReader& map, AlloyFile& alloy) {
 
 }  // namespace
 
+std::vector<std::string> rules_of(const AlloyFile& alloy) {
+  std::vector<std::string> rules;
+  if (alloy.pure_melting_point) rules.emplace_back("pure");
+  if (alloy.binary) rules.insert(rules.end(), {"lever", "scheil"});
+  if (alloy.measured) rules.emplace_back("measured");
+  return rules;
+}
+
+alloy::SolidificationPath path_of(const std::string& rule, const AlloyFile& alloy, double composition) {
+  if (rule == "pure") return alloy::pure_path(*alloy.pure_melting_point);
+  if (rule == "measured") return *alloy.measured;
+  if (rule == "lever") return alloy::lever_path(alloy.binary->diagram, composition);
+  return alloy::scheil_path(alloy.binary->diagram, composition);
+}
+
 AlloyFile read_alloy(const std::string& path) {
   SourceFile source = read_source_file(path, "alloy file");
   AlloyFile alloy;

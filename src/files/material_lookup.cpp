@@ -75,6 +75,18 @@ std::string material_file_name(const std::string& name) {
   return result + ".yaml";
 }
 
+std::string find_alloy(const std::string& name, const MaterialFolders& folders) {
+  const fs::path library = fs::path(folders.library) / words_of(MaterialKind::alloy).folder;
+  std::error_code error;
+  if (ends_in_yaml(name)) return name;  // reading it tells what is wrong with it
+  const std::string file = material_file_name(name);
+  for (const fs::path& path : {fs::path(folders.beside) / file, library / file})
+    if (fs::exists(path, error)) return path.string();
+  throw base::InputError(
+      fmt::format("there is no file {} here or in {}; {}", file, library.string(),
+                  unknown_name_hint(name, names_in(library, words_of(MaterialKind::alloy).version_key))));
+}
+
 std::string find_material(const Reading& reading, const SourceNode& in_case, const std::string& key, MaterialKind kind,
                           const MaterialFolders& folders) {
   const KindOfMaterial& words = words_of(kind);

@@ -62,16 +62,8 @@ double read_case_composition(const MapReader& map, const AlloyFile& alloy) {
   return composition;
 }
 
-std::vector<std::string> possible_rules(const AlloyFile& alloy) {
-  std::vector<std::string> rules;
-  if (alloy.pure_melting_point) rules.emplace_back("pure");
-  if (alloy.binary) rules.insert(rules.end(), {"lever", "scheil"});
-  if (alloy.measured) rules.emplace_back("measured");
-  return rules;
-}
-
 std::string read_rule(const MapReader& map, const AlloyFile& alloy) {
-  const auto rules = possible_rules(alloy);
+  const auto rules = rules_of(alloy);
   std::string rule = alloy.default_path;
   if (map.has("path"))
     rule = map.choice("path");
@@ -85,13 +77,6 @@ std::string read_rule(const MapReader& map, const AlloyFile& alloy) {
              "found a composition beside the measured path, which holds for the alloy's own composition only",
              "remove it, or choose lever or scheil");
   return rule;
-}
-
-alloy::SolidificationPath make_path(const std::string& rule, const AlloyFile& alloy, double composition) {
-  if (rule == "pure") return alloy::pure_path(*alloy.pure_melting_point);
-  if (rule == "measured") return *alloy.measured;
-  if (rule == "lever") return alloy::lever_path(alloy.binary->diagram, composition);
-  return alloy::scheil_path(alloy.binary->diagram, composition);
 }
 
 double read_pouring(const MapReader& map, double liquidus) {
@@ -145,7 +130,7 @@ void read_section(const MapReader& map, Materials& materials, freeze::Section& s
   const std::string rule = read_rule(map, alloy);
   const std::string blamed = map.has("composition") ? "composition" : map.has("path") ? "path" : "alloy";
   section.path = at_place(map.reading(), map.required(blamed), map.path(blamed),
-                          [&] { return make_path(rule, alloy, composition); });
+                          [&] { return path_of(rule, alloy, composition); });
   section.pouring_temperature = read_pouring(map, section.path->liquidus());
   section.cells = map.integer_if("cells");
   if (!section.cells) map.note("cells", "from the accuracy", "default");

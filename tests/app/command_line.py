@@ -14,7 +14,8 @@ DONE, REFUSED, FILE_TROUBLE = 0, 2, 4
 # name, arguments, exit status, texts of which each must be in the answer.
 # {case}: an accepted case; {empty}, {misspelt} (on line {line}): case files made below; {scratch}: an empty folder.
 COMMAND_LINES = [
-    ("help", ["--help"], DONE, ["check", "run"]),
+    ("help", ["--help"], DONE, ["check", "run", "alloy"]),
+    ("help of alloy", ["alloy", "--help"], DONE, ["palier alloy", "--composition"]),
     ("help of check", ["check", "--help"], DONE, ["palier check"]),
     ("help of run", ["run", "--help"], DONE, ["palier run", "--json"]),
     ("version", ["--version"], DONE, ["palier", "0."]),

@@ -22,11 +22,23 @@ struct RunOptions {
   std::string command_line;  ///< for the provenance
 };
 
+struct AlloyOptions {
+  std::string name;  ///< in the library or beside, or a file ending in .yaml
+  std::string library;
+  std::string composition;  ///< "Cu 4.5 %"; empty: that of the file
+  std::string rule;         ///< of the path told in detail; empty: the file's default
+  bool table = false;       ///< fraction solid against temperature
+  bool json = false;
+};
+
 /// Reads and resolves a case and prints it with the source of every value; solves nothing.
 void check(const CheckOptions& options);
 
 /// Runs a case; prints the table or JSON and writes the result file.
 void run(const RunOptions& options);
+
+/// How an alloy freezes: liquidus, end of freezing by each rule, arrests, path.
+void show_alloy(const AlloyOptions& options);
 
 /// Parses the command line, runs what it asks for, prints errors to stderr. Returns the exit status.
 int main(int argc, char** argv);

@@ -4,6 +4,7 @@
 #include <memory>
 #include <optional>
 #include <string>
+#include <vector>
 
 #include "palier/alloy/diagram.hpp"
 #include "palier/alloy/enthalpy_curve.hpp"
@@ -53,6 +54,16 @@ struct MoldFile {
   MaterialFile file;
   alloy::MoldProperties properties;
 };
+
+/// Names of the rules an alloy file has data for: "pure", "lever", "scheil", "measured".
+std::vector<std::string> rules_of(const AlloyFile& alloy);
+
+/// Path by one of rules_of. @param composition [mass %], of a binary. Throws base::InputError where the rule does not
+/// end.
+alloy::SolidificationPath path_of(const std::string& rule, const AlloyFile& alloy, double composition);
+
+/// Path of an alloy's file by its name, outside a case. Throws base::InputError with the nearest names.
+std::string find_alloy(const std::string& name, const MaterialFolders& folders);
 
 /// Both throw base::InputError with the place of what is wrong.
 AlloyFile read_alloy(const std::string& path);
