@@ -71,8 +71,8 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
   for (std::size_t i = 0; i < n; ++i) stage_.base[i] = from.enthalpy[i] + weight * gain(from.flow, i);
   stage_.fronts = from.fronts;
   stage_.unknown = from.unknown;
-  predict(rate_, time, Real(kGamma * length));
-  if (!solve_stage(time + kGamma * length, weight, newton_tolerance, report)) return report;
+  predict(time, Real(kGamma * length));
+  if (!solve_stage(time + kGamma * length, newton_tolerance, report)) return report;
   middle_flow_ = field_.flow();
   middle_unknown_ = stage_.unknown;
   const LaneFronts<Real> middle_fronts = stage_.fronts;
@@ -85,8 +85,8 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
   for (int l = 0; l < lane_count<Real>; ++l)
     for (const int side : {-1, +1}) passage_.pass_on_debts(stage_, l, side, from.fronts[static_cast<std::size_t>(l)]);
   set_rate(from.unknown, from.fronts, Real(kGamma * length));
-  predict(rate_, time, Real((1 - kGamma) * length));
-  if (!solve_stage(time + length, weight, newton_tolerance, report)) return report;
+  predict(time, Real((1 - kGamma) * length));
+  if (!solve_stage(time + length, newton_tolerance, report)) return report;
 
   to.flow = field_.flow();
   to.unknown = stage_.unknown;
@@ -107,22 +107,11 @@ StepReport ImplicitStep<Real>::advance(const State<Real>& from, const Real& time
       if (!fronts.in_cell(static_cast<int>(i))) lane(to.unknown[i], l) = lane(to.enthalpy[i], l);
   }
   for (int l = 0; l < lane_count<Real>; ++l)
-    for (const int side : {-1, +1}) {
-      const Front* before = from.fronts[static_cast<std::size_t>(l)].with_solid_side(side);
-      if (!before) continue;
-      const int last = last_swept(l, *before);
-      share_error(l, before->cell, last);
-    }
-  if (getenv("DBG") && stage_.fronts[0].count) {
-    int j = stage_.fronts[0].front[0].cell;
-    printf("   h %.3g:", lane(length, 0));
-    for (int c = j - 1; c <= j + 3; ++c)
-      printf(" c%d f %.5g %.5g %.5g |", c, lane(gain(from.flow, c), 0) / lane(scale_[c], 0),
-             lane(gain(middle_flow_, c), 0) / lane(scale_[c], 0), lane(gain(to.flow, c), 0) / lane(scale_[c], 0));
-    puts("");
-  }
+    for (const int side : {-1, +1})
+      if (const Front* before = from.fronts[static_cast<std::size_t>(l)].with_solid_side(side))
+        share_error(l, before->cell, last_swept(l, *before));
   // Damped by the step's own operator, or stiff cells would make the estimate meaningless.
-  assemble(weight);
+  assemble();
   matrix_.solve(change_);
   for (int l = 0; l < lane_count<Real>; ++l) lane(error, l) = error_norm(l);
   set_rate(middle_unknown_, middle_fronts, Real((1 - kGamma) * length));
@@ -173,8 +162,8 @@ double ImplicitStep<Real>::error_norm(int l) const {
 
 /// Moves the unknowns along the rate they had, through the same stops as Newton's changes.
 template <class Real>
-void ImplicitStep<Real>::predict(const std::vector<Real>& rate, const Real& time, const Real& length) {
-  for (std::size_t i = 0; i < change_.size(); ++i) change_[i] = rate[i] * length;
+void ImplicitStep<Real>::predict(const Real& time, const Real& length) {
+  for (std::size_t i = 0; i < change_.size(); ++i) change_[i] = rate_[i] * length;
   move(time);
 }
 
@@ -214,17 +203,17 @@ double ImplicitStep<Real>::heat_out(int l, const State<Real>& from, const State<
 }
 
 template <class Real>
-bool ImplicitStep<Real>::solve_stage(const Real& time, const Real& weight, double tolerance, StepReport& report) {
+bool ImplicitStep<Real>::solve_stage(const Real& time, double tolerance, StepReport& report) {
   for (int iteration = 0;; ++iteration) {
     field_.evaluate(time, stage_.unknown, stage_.fronts);
     ++report.iterations;
-    report.residual = residual(weight, report.worst_cell);
+    report.residual = residual(report.worst_cell);
     if (report.residual <= tolerance) return true;
     if (iteration == kMostIterations || !std::isfinite(report.residual)) {
       report.status = StepReport::Status::stalled;
       return false;
     }
-    assemble(weight);
+    assemble();
     matrix_.solve(change_);
     move(time);
   }
@@ -232,9 +221,10 @@ bool ImplicitStep<Real>::solve_stage(const Real& time, const Real& weight, doubl
 
 /// Leaves minus the residual in change_; returns its largest value relative to the heat scale over cells and lanes.
 template <class Real>
-double ImplicitStep<Real>::residual(const Real& weight, int& worst) {
+double ImplicitStep<Real>::residual(int& worst) {
   const std::size_t n = change_.size();
-  for (std::size_t i = 0; i < n; ++i) change_[i] = stage_.base[i] - stage_.unknown[i] + weight * gain(field_.flow(), i);
+  for (std::size_t i = 0; i < n; ++i)
+    change_[i] = stage_.base[i] - stage_.unknown[i] + stage_.weight * gain(field_.flow(), i);
   double largest = 0;
   for (int l = 0; l < lane_count<Real>; ++l) {
     const Fronts& fronts = stage_.fronts[static_cast<std::size_t>(l)];
@@ -246,6 +236,7 @@ double ImplicitStep<Real>::residual(const Real& weight, int& worst) {
       if (r <= largest) continue;  // so written that a NaN is not passed over
       largest = r;
       worst = static_cast<int>(i);
+      if (!std::isfinite(r)) return r;
     }
   }
   return largest;
@@ -253,11 +244,11 @@ double ImplicitStep<Real>::residual(const Real& weight, int& worst) {
 
 /// Jacobian of unknown + excess - weight * gain.
 template <class Real>
-void ImplicitStep<Real>::assemble(const Real& weight) {
+void ImplicitStep<Real>::assemble() {
   const std::size_t n = change_.size();
   const std::vector<Real>&inner = field_.by_inner(), &outer = field_.by_outer();
   for (std::size_t i = 0; i < n; ++i) {
-    const Real s = weight * inverse_volume_[i];
+    const Real s = stage_.weight * inverse_volume_[i];
     matrix_.lower[i] = -s * inner[i];
     matrix_.diagonal[i] = 1.0 - s * (outer[i] - inner[i + 1]);
     matrix_.upper[i] = s * outer[i + 1];

@@ -24,6 +24,8 @@ ORDER = list(LAYERS)
 WITHOUT_IO = ORDER[: ORDER.index("files")]  # these take and give plain values
 IO_HEADERS = {"iostream", "ostream", "istream", "fstream", "cstdio", "stdio.h", "filesystem", "print", "syncstream"}
 OPERATING_SYSTEM = ("unistd.h", "fcntl.h", "sys/")  # for layers that do I/O
+# Words that speak, listen or look at the environment, whatever header brought them in.
+IO_WORDS = re.compile(r"\b(getenv|f?printf|f?puts|putchar|scanf|fopen|std::(cout|cerr|clog|cin))\b")
 LONGEST_FILE = 400  # lines
 INCLUDE = re.compile(r'^\s*#\s*include\s*([<"])([^>"]+)[>"]')
 
@@ -90,6 +92,8 @@ def breaches(root):
             if match := INCLUDE.match(line):
                 if wrong := breach_of_include(root, path, layer, *match.groups()):
                     found.append(f"{where}:{number}: {wrong}")
+            elif layer in WITHOUT_IO and (word := IO_WORDS.search(line.split("//")[0])):
+                found.append(f"{where}:{number}: says {word[0]}: layer {layer} does no I/O")
     return found, len(files)
 
 
@@ -107,6 +111,8 @@ PLANTED = [  # file, its text, what the breach must say
     ("src/heat/high.cpp", '  #  include "../files/tree.cpp"\n', "layer heat stands below layer files"),
     ("src/files/high.cpp", '#include "app/version.hpp"\n', "layer files stands below layer app"),
     ("src/alloy/talk.cpp", "#include <iostream>\n", "layer alloy does no I/O"),
+    ("src/heat/leak.cpp", 'void f() { printf("x"); }\n', "says printf: layer heat does no I/O"),
+    ("src/freeze/look.cpp", 'bool f() { return getenv("X"); }\n', "says getenv: layer freeze does no I/O"),
     ("include/palier/freeze/disk.hpp", "\n#include <filesystem>\n", "disk.hpp:2: includes <filesystem>"),
     ("src/freeze/math.cpp", "#include <Eigen/Core>\n", "outside libraries of layer freeze: none"),
     ("src/heat/log.cpp", "#include <nlohmann/nlohmann.h>\n", "outside libraries of layer heat: Eigen/"),

@@ -53,11 +53,11 @@ class ImplicitStep {
   void adopt_fronts(State<Real>& state, const Real& time) { passage_.adopt(state, time); }
 
  private:
-  bool solve_stage(const Real& time, const Real& weight, double tolerance, StepReport& report);
-  double residual(const Real& weight, int& worst);
-  void assemble(const Real& weight);
+  bool solve_stage(const Real& time, double tolerance, StepReport& report);
+  double residual(int& worst);
+  void assemble();
   void move(const Real& time);
-  void predict(const std::vector<Real>& rate, const Real& time, const Real& length);
+  void predict(const Real& time, const Real& length);
   void set_rate(const std::vector<Real>& before, const LaneFronts<Real>& fronts_before, const Real& length);
   Marks marks(int lane) const;
   int last_swept(int lane, const Front& before) const;
