@@ -15,6 +15,8 @@ import os
 import h5py
 import numpy
 
+from file_trouble import FileTrouble
+
 # Every variable a complete result has, with its dimensions.
 VARIABLES = {
     "time": ("time",), "r": ("r",), "r_metal": ("r_metal",), "r_bounds": ("r", "side"),
@@ -35,12 +37,8 @@ TEXTS = ("Conventions", "title", "source", "history", "shape", "alloy", "solidif
 FACE_TOLERANCE = 1e-9  # faces of neighboring cells agree to this share of the section
 
 
-class ResultTrouble(Exception):
-    """A file that gives no result. `status` is palier's exit status: 2 not a (complete) result, 4 cannot be read."""
-
-    def __init__(self, path, cause, status):
-        super().__init__(f"{path}: {cause}")
-        self.status = status
+class ResultTrouble(FileTrouble):
+    """A file that gives no result: status 2 not a (complete) result, 4 cannot be read."""
 
 
 @dataclasses.dataclass(frozen=True)

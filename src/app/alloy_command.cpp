@@ -9,10 +9,12 @@
 #include <vector>
 
 #include "answer.hpp"
+#include "drawing.hpp"
 #include "palier/app/commands.hpp"
 #include "palier/base/error.hpp"
 #include "palier/files/material_file.hpp"
 #include "palier/files/named_composition.hpp"
+#include "palier/files/quantity.hpp"
 
 namespace palier::app {
 namespace {
@@ -20,7 +22,8 @@ namespace {
 using Json = nlohmann::ordered_json;
 
 constexpr double kCelsius = 273.15;
-constexpr int kTableRows = 20;
+constexpr int kTableRows = 20;     // a person reads
+constexpr int kCurvePoints = 100;  // a program draws
 
 /// A path by one rule, or why there is none.
 struct Outlook {
@@ -29,17 +32,52 @@ struct Outlook {
   std::string refused;
 };
 
-std::vector<Outlook> outlooks(const files::AlloyFile& alloy, double composition) {
-  std::vector<Outlook> all;
-  for (const std::string& rule : files::rules_of(alloy)) {
-    Outlook o{rule, std::nullopt, {}};
-    try {
-      o.path = files::path_of(rule, alloy, composition);
-    } catch (const base::InputError& error) {
-      o.refused = error.what();
-    }
-    all.push_back(std::move(o));
+/// A path, or the reason why the rule gives none.
+template <class Make>
+Outlook outlook(const std::string& rule, const Make& make) {
+  try {
+    return {rule, make(), {}};
+  } catch (const base::InputError& error) {
+    return {rule, std::nullopt, error.what()};
   }
+}
+
+/// How the solute diffuses back at a cooling rate.
+struct BackDiffusionAt {
+  double time;     ///< local solidification time [s]
+  double spacing;  ///< of the arms [m]
+  double number;   ///< 4 D t / spacing^2
+};
+
+/// The time in the freezing range of Scheil's rule, which is the longest.
+std::optional<BackDiffusionAt> back_diffusion_at(const std::string& cooling_rate, const files::AlloyFile& alloy,
+                                                 double composition) {
+  if (cooling_rate.empty()) return std::nullopt;
+  if (!alloy.back_diffusion)
+    throw base::InputError("--cooling-rate: " + alloy.file.name + " has no data on back-diffusion");
+  double rate = 0;
+  try {
+    rate = files::parse_quantity(cooling_rate, files::QuantityKind::cooling_rate).value;
+  } catch (const files::QuantityFault& fault) {
+    throw base::InputError(std::string("--cooling-rate: ") + fault.what() +
+                           (fault.hint().empty() ? "" : "; " + fault.hint()));
+  }
+  const double range = files::path_of("scheil", alloy, composition).freezing_range();
+  BackDiffusionAt at{};
+  at.time = alloy::local_solidification_time(range, rate);
+  at.spacing = alloy::arm_spacing(alloy.back_diffusion->ripening, at.time);
+  at.number = alloy::diffusion_number(alloy.back_diffusion->diffusivity, at.time, at.spacing);
+  return at;
+}
+
+std::vector<Outlook> outlooks(const files::AlloyFile& alloy, double composition,
+                              const std::optional<BackDiffusionAt>& back) {
+  std::vector<Outlook> all;
+  for (const std::string& rule : files::rules_of(alloy))
+    all.push_back(outlook(rule, [&] { return files::path_of(rule, alloy, composition); }));
+  if (!back) return all;
+  for (const std::string& rule : files::timed_rules_of(alloy))
+    all.push_back(outlook(rule, [&] { return files::timed_path_of(rule, alloy, composition, back->time); }));
   return all;
 }
 
@@ -47,10 +85,10 @@ std::vector<Outlook> outlooks(const files::AlloyFile& alloy, double composition)
 std::string range_class(double range) { return range < 50 ? "short" : range <= 110 ? "medium" : "long"; }
 
 /// Temperatures from the liquidus to the end of freezing with the fraction solid, arrests as two points.
-std::vector<std::pair<double, double>> points_of(const alloy::SolidificationPath& path) {
+std::vector<std::pair<double, double>> points_of(const alloy::SolidificationPath& path, int steps) {
   std::vector<std::pair<double, double>> points;
-  for (int i = 0; i <= kTableRows; ++i) {
-    const double T = path.liquidus() + (path.end_of_freezing() - path.liquidus()) * i / kTableRows;
+  for (int i = 0; i <= steps; ++i) {
+    const double T = path.liquidus() + (path.end_of_freezing() - path.liquidus()) * i / steps;
     if (i == 0 || path.freezing_range() > 0) points.emplace_back(T, path.fraction_above(T));
   }
   for (const alloy::Arrest& a : path.arrests()) {
@@ -87,7 +125,7 @@ Json diagram_of(const files::BinaryAlloy& binary) {
 }
 
 Json json_of(const files::AlloyFile& alloy, double composition, const std::vector<Outlook>& all,
-             const alloy::SolidificationPath& told) {
+             const alloy::SolidificationPath& told, const std::optional<BackDiffusionAt>& back) {
   Json out;
   out["alloy"] = alloy.file.name;
   if (alloy.binary) {
@@ -101,6 +139,10 @@ Json json_of(const files::AlloyFile& alloy, double composition, const std::vecto
     out["end_of_freezing_C"][o.rule] = o.path ? Json(o.path->end_of_freezing() - kCelsius) : Json(nullptr);
   out["freezing_range_K"] = told.freezing_range();
   out["freezing_range_class"] = range_class(told.freezing_range());
+  if (back)
+    out["back_diffusion"] = {{"local_solidification_time_s", back->time},
+                             {"arm_spacing_m", back->spacing},
+                             {"diffusion_number", back->number}};
   out["arrests"] = Json::array();
   for (const alloy::Arrest& a : told.arrests())
     out["arrests"].push_back(
@@ -110,39 +152,43 @@ Json json_of(const files::AlloyFile& alloy, double composition, const std::vecto
     out["last_liquid_mass_percent"] = last->liquid;
   }
   out["path"] = Json::array();
-  for (const auto& [T, fraction] : points_of(told)) out["path"].push_back({T - kCelsius, fraction});
+  for (const auto& [T, fraction] : points_of(told, kCurvePoints)) out["path"].push_back({T - kCelsius, fraction});
   if (alloy.binary) out["diagram"] = diagram_of(*alloy.binary);
   out["caution"] = caution();
   return out;
 }
 
 void print(const files::AlloyFile& alloy, double composition, const std::vector<Outlook>& all,
-           const alloy::SolidificationPath& told, bool table) {
+           const alloy::SolidificationPath& told, const std::optional<BackDiffusionAt>& back, bool table) {
   fmt::print("{}", alloy.file.name);
   if (alloy.binary) fmt::print(": {:.4g} wt% {} in {}", composition, alloy.binary->solute, alloy.binary->base);
   fmt::print(
       "\nLiquidus {:.1f} degC; by the {} path freezing ends at {:.1f} degC, a {} freezing range of {:.1f} K.\n\n",
       told.liquidus() - kCelsius, told.rule(), told.end_of_freezing() - kCelsius, range_class(told.freezing_range()),
       told.freezing_range());
-  fmt::print("{:>10}{:>16}{:>16}  {}\n", "rule", "ends, degC", "range, K", "arrests");
+  fmt::print("{:>16}{:>14}{:>12}  {}\n", "rule", "ends, degC", "range, K", "arrests");
   for (const Outlook& o : all) {
     if (!o.path) {
-      fmt::print("{:>10}{:>16}{:>16}  {}\n", o.rule, "-", "-", o.refused);
+      fmt::print("{:>16}{:>14}{:>12}  {}\n", o.rule, "-", "-", o.refused);
       continue;
     }
     std::string arrests;
     for (const alloy::Arrest& a : o.path->arrests())
       arrests += fmt::format("{}{:.1f} % at {:.1f} degC ({})", arrests.empty() ? "" : ", ", 100 * a.fraction,
                              a.temperature - kCelsius, a.reaction);
-    fmt::print("{:>10}{:>16.1f}{:>16.1f}  {}\n", o.rule, o.path->end_of_freezing() - kCelsius, o.path->freezing_range(),
+    fmt::print("{:>16}{:>14.1f}{:>12.1f}  {}\n", o.rule, o.path->end_of_freezing() - kCelsius, o.path->freezing_range(),
                arrests.empty() ? "none" : arrests);
   }
   if (const auto first = told.solute(told.liquidus()), last = told.solute(told.end_of_freezing()); first && last)
     fmt::print("\nFirst solid {:.3g} wt%, last liquid {:.3g} wt% {} ({} path).\n", first->solid, last->liquid,
                alloy.binary->solute, told.rule());
+  if (back)
+    fmt::print("\nBack-diffusion with {:.4g} s of local solidification, arms of {:.3g} um: diffusion number {:.3g}.\n",
+               back->time, 1e6 * back->spacing, back->number);
   if (table) {
     fmt::print("\n{:>12}{:>18}  ({} path)\n", "T, degC", "fraction solid", told.rule());
-    for (const auto& [T, fraction] : points_of(told)) fmt::print("{:>12.2f}{:>18.5f}\n", T - kCelsius, fraction);
+    for (const auto& [T, fraction] : points_of(told, kTableRows))
+      fmt::print("{:>12.2f}{:>18.5f}\n", T - kCelsius, fraction);
   }
   fmt::print("\n{}\n", caution());
 }
@@ -153,17 +199,25 @@ void show_alloy(const AlloyOptions& options) {
   const files::AlloyFile alloy = files::read_alloy(files::find_alloy(options.name, {".", options.library}));
   double composition = alloy.binary ? alloy.binary->composition : 0;
   if (!options.composition.empty()) composition = files::named_composition(options.composition, alloy);
-  const std::vector<Outlook> all = outlooks(alloy, composition);
+  const std::optional<BackDiffusionAt> back = back_diffusion_at(options.cooling_rate, alloy, composition);
+  const std::vector<Outlook> all = outlooks(alloy, composition, back);
   const std::string rule = options.rule.empty() ? alloy.default_path : options.rule;
   const auto told = std::find_if(all.begin(), all.end(), [&](const Outlook& o) { return o.rule == rule; });
-  if (told == all.end())
-    throw base::InputError("--path: found '" + rule + "'; " + alloy.file.name +
-                           " has data for: " + fmt::format("{}", fmt::join(files::rules_of(alloy), ", ")));
+  if (told == all.end()) {
+    std::vector<std::string> known;
+    known.reserve(all.size());
+    for (const Outlook& o : all) known.push_back(o.rule);
+    throw base::InputError(fmt::format("--path: found '{}'; {} has data for: {}{}", rule, alloy.file.name,
+                                       fmt::join(known, ", "),
+                                       alloy.back_diffusion && !back ? "; more with --cooling-rate" : ""));
+  }
   if (!told->path) throw base::InputError(told->refused);
+  if (!options.diagram.empty())
+    draw_diagram(json_of(alloy, composition, all, *told->path, back).dump(), options.diagram, options.library);
   if (options.json)
-    fmt::print("{}\n", json_of(alloy, composition, all, *told->path).dump(2));
+    fmt::print("{}\n", json_of(alloy, composition, all, *told->path, back).dump(2));
   else
-    print(alloy, composition, all, *told->path, options.table);
+    print(alloy, composition, all, *told->path, back, options.table);
 }
 
 }  // namespace palier::app

@@ -35,6 +35,9 @@ void check(const CheckOptions& options) {
   for (const alloy::Arrest& a : path.arrests())
     fmt::print("; {:.1f} % at {:.2f} degC ({})", 100 * a.fraction, a.temperature - 273.15, a.reaction);
   fmt::print(".\n");
+  if (input.section.path_after)
+    fmt::print(
+        "Back-diffusion takes the time that freezing takes: the run settles the path, starting from this one.\n");
   for (const files::MaterialFile& m : input.materials) {
     fmt::print("\n{} ({}):\n", m.name, m.path);
     print(m.values);

@@ -65,6 +65,9 @@ int dispatch(int argc, char** argv) {
       ->required();
   alloy_command->add_option("--composition", alloy_options.composition, "Such as 'Cu 5 %'; default: that of the file");
   alloy_command->add_option("--path", alloy_options.rule, "Rule told in detail; default: that of the file");
+  alloy_command->add_option("--cooling-rate", alloy_options.cooling_rate,
+                            "Mean rate over freezing, such as '1 K/s': adds the rules of back-diffusion");
+  alloy_command->add_option("--diagram", alloy_options.diagram, "Draw diagram and path to a file, .png or .svg");
   alloy_command->add_flag("--table", alloy_options.table, "Add fraction solid against temperature");
   alloy_command->add_flag("--json", alloy_options.json, "Answer as JSON instead of a table");
   std::string library;

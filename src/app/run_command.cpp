@@ -11,12 +11,13 @@
 namespace palier::app {
 
 void run(const RunOptions& options) {
-  const files::CaseFile input = files::read_case(options.case_file, options.library);
+  files::CaseFile input = files::read_case(options.case_file, options.library);
   freeze::Result result;
   {
     ProgressBar bar(!options.quiet);
     result = freeze::run(input.section, [&bar](double share) { bar.show(share); });
   }
+  input.section.path = result.path;  // under back-diffusion the case alone does not know it
   if (!options.output.empty())
     files::write_result(options.output, input, result, {version(), commit(), options.command_line});
   std::fputs((options.json ? answer_json(input, result) : answer_table(input, result)).c_str(), stdout);

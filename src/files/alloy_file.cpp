@@ -3,6 +3,7 @@
 
 #include <utility>
 
+#include "palier/alloy/back_diffusion.hpp"
 #include "palier/files/material_file.hpp"
 
 namespace palier::files {
@@ -75,6 +76,13 @@ void read_freezing(const MapReader& map, AlloyFile& alloy) {
     alloy.pure_melting_point = read_sourced_value(map.map("pure", "freezing: pure"), "melting point");
   if (map.has("binary lines")) alloy.binary = read_binary(map.map("binary lines", "freezing: binary lines"));
   if (map.has("measured")) alloy.measured = read_measured(map.map("measured", "freezing: measured"));
+  if (map.has("back-diffusion")) {
+    if (!alloy.binary) map.fail("back-diffusion", "found 'back-diffusion' without 'binary lines'; expected both");
+    const MapReader data = map.map("back-diffusion", "freezing: back-diffusion");
+    alloy.back_diffusion = BackDiffusionData{
+        read_sourced_value(data, "diffusivity"),
+        {read_sourced_value(data, "arm spacing at 1 s"), read_sourced_value(data, "ripening exponent")}};
+  }
   if (!has_path(alloy, alloy.default_path))
     map.fail("default path", fmt::format("found '{}', but the file has no data for it", alloy.default_path),
              "pure needs 'pure', lever and scheil need 'binary lines', measured needs 'measured'");
@@ -88,6 +96,22 @@ std::vector<std::string> rules_of(const AlloyFile& alloy) {
   if (alloy.binary) rules.insert(rules.end(), {"lever", "scheil"});
   if (alloy.measured) rules.emplace_back("measured");
   return rules;
+}
+
+std::vector<std::string> timed_rules_of(const AlloyFile& alloy) {
+  if (!alloy.back_diffusion) return {};
+  return {"brody-flemings", "clyne-kurz", "ohnaka"};
+}
+
+alloy::SolidificationPath timed_path_of(const std::string& rule, const AlloyFile& alloy, double composition,
+                                        double local_solidification_time) {
+  const BackDiffusionData& data = *alloy.back_diffusion;
+  const double spacing = alloy::arm_spacing(data.ripening, local_solidification_time);
+  const alloy::BackDiffusion which = rule == "clyne-kurz"       ? alloy::BackDiffusion::clyne_kurz
+                                     : rule == "brody-flemings" ? alloy::BackDiffusion::brody_flemings
+                                                                : alloy::BackDiffusion::ohnaka;
+  return alloy::back_diffusion_path(alloy.binary->diagram, composition, which,
+                                    alloy::diffusion_number(data.diffusivity, local_solidification_time, spacing));
 }
 
 alloy::SolidificationPath path_of(const std::string& rule, const AlloyFile& alloy, double composition) {

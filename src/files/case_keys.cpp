@@ -83,7 +83,7 @@ KeyTable section() {
             {},
             "",
             "",
-            {"lever", "scheil", "pure", "measured"},
+            {"lever", "scheil", "brody-flemings", "clyne-kurz", "ohnaka", "pure", "measured"},
             "default: the alloy's",
             "rule of the solidification path"},
            {"superheat",

@@ -47,6 +47,22 @@ KeyTable sourced() {
            {"source", Form::text, {}, "", "", {}, "required", "author, year and table or equation; not empty"}}};
 }
 
+KeyTable back_diffusion() {
+  return {"freezing: back-diffusion",
+          "Diffusion of the solute in the solid while it freezes, over arms that ripen as `arm spacing at 1 s` times "
+          "(time / 1 s)^`ripening exponent`.",
+          {{"diffusivity",
+            Form::sourced,
+            Kind::diffusivity,
+            "1e-9 mm2/s",
+            "1 mm2/s",
+            {},
+            "required",
+            "of the solute in the solid, at a temperature midway through freezing"},
+           {"arm spacing at 1 s", Form::sourced, Kind::length, "0.1 um", "1 mm", {}, "required", "secondary arms"},
+           {"ripening exponent", Form::sourced, Kind::ratio, "0.1", "0.6", {}, "required", "usually near 1/3"}}};
+}
+
 KeyTable binary_lines() {
   return {"freezing: binary lines",
           "Liquidus and solidus of the base metal's side of a binary diagram.",
@@ -124,11 +140,13 @@ FileKeys make_alloy() {
           "rule of the solidification path where the case names none"},
          {"pure", Form::map, {}, "", "", {}, "optional", "a metal that freezes at one temperature"},
          {"binary lines", Form::map, {}, "", "", {}, "optional", "lines of a binary phase diagram"},
-         {"measured", Form::map, {}, "", "", {}, "optional", "fraction solid from a thermal-analysis record"}}},
+         {"measured", Form::map, {}, "", "", {}, "optional", "fraction solid from a thermal-analysis record"},
+         {"back-diffusion", Form::map, {}, "", "", {}, "optional", "beside binary lines: what its rules need"}}},
        {"freezing: pure",
         "A pure metal.",
         {{"melting point", Form::sourced, Kind::temperature, "0 K", "4000 K", {}, "required", "of the metal"}}},
        binary_lines(),
+       back_diffusion(),
        {"freezing: measured",
         "Fraction solid against falling temperature. What is left at the last point freezes there.",
         {{"points",

@@ -22,6 +22,8 @@ const std::map<QuantityKind, KindWords>& kind_words() {
       {QuantityKind::time, {"a time", "s", "90 s, 2 min or 1.5 h"}},
       {QuantityKind::conductance, {"a conductance or film coefficient", "W/m^2/K", "800 W/m2/K"}},
       {QuantityKind::conductivity, {"a thermal conductivity", "W/m/K", "0.6 W/m/K"}},
+      {QuantityKind::diffusivity, {"a diffusivity", "m^2/s", "5e-13 m2/s"}},
+      {QuantityKind::cooling_rate, {"a cooling rate", "K/s", "1 K/s or 60 K/min"}},
       {QuantityKind::heat_capacity, {"a heat capacity", "J/kg/K", "900 J/kg/K or 0.9 kJ/kg/K"}},
       {QuantityKind::density, {"a density", "kg/m^3", "2600 kg/m3 or 2.6 g/cm3"}},
       {QuantityKind::latent_heat, {"a latent heat", "J/kg", "389 kJ/kg"}},

@@ -63,7 +63,8 @@ double read_case_composition(const MapReader& map, const AlloyFile& alloy) {
 }
 
 std::string read_rule(const MapReader& map, const AlloyFile& alloy) {
-  const auto rules = rules_of(alloy);
+  std::vector<std::string> rules = rules_of(alloy);
+  for (const std::string& timed : timed_rules_of(alloy)) rules.push_back(timed);
   std::string rule = alloy.default_path;
   if (map.has("path"))
     rule = map.choice("path");
@@ -129,8 +130,11 @@ void read_section(const MapReader& map, Materials& materials, freeze::Section& s
   const double composition = read_case_composition(map, alloy);
   const std::string rule = read_rule(map, alloy);
   const std::string blamed = map.has("composition") ? "composition" : map.has("path") ? "path" : "alloy";
+  const std::vector<std::string> timed = timed_rules_of(alloy);
+  const bool takes_time = std::find(timed.begin(), timed.end(), rule) != timed.end();
   section.path = at_place(map.reading(), map.required(blamed), map.path(blamed),
-                          [&] { return path_of(rule, alloy, composition); });
+                          [&] { return path_of(takes_time ? "scheil" : rule, alloy, composition); });
+  if (takes_time) section.path_after = [=](double time) { return timed_path_of(rule, alloy, composition, time); };
   section.pouring_temperature = read_pouring(map, section.path->liquidus());
   section.cells = map.integer_if("cells");
   if (!section.cells) map.note("cells", "from the accuracy", "default");

@@ -73,10 +73,12 @@ void Watch::look(const heat::StepView& step) {
       end_[k] = kNever;
     }
   }
-  if (none_solid)
-    frozen_ = last_radius_ = kNever;
-  else
+  if (!none_solid) {
     look_at_whole(step);
+    return;
+  }
+  frozen_ = last_radius_ = kNever;
+  liquid_seen_ = true;
 }
 
 void Watch::look_at_whole(const heat::StepView& step) {
@@ -105,7 +107,14 @@ void Watch::look_at_whole(const heat::StepView& step) {
   if (center_ && all) gone(cells.begin, [&](double t) { return profile_.to_end(step, *center_, t); });
   if (!all) {
     frozen_ = last_radius_ = kNever;
+    liquid_seen_ = true;
     return;
+  }
+  if (last < 0 && liquid_seen_ && !std::isfinite(frozen_)) {
+    // The last front ended so close to the begin of the step that the mean of its cell already counts as solid there.
+    const heat::Fronts& before = step.before().fronts[0];
+    last = before.count > 0 ? before.front[0].cell : cells.begin;
+    latest = step.begin();
   }
   if (last < 0) return;
   frozen_ = latest;

@@ -51,6 +51,22 @@ class Alloy(unittest.TestCase):
         found = answer("Al-7Si-0.3Mg", "--composition", "Si 10 at%")["composition_mass_percent"]
         self.assertAlmostEqual(found, 10.366, places=2)
 
+    def test_back_diffusion_lies_between_lever_and_scheil(self):
+        def share(rule, rate):
+            found = answer("Al-4.5Cu", "--path", rule, "--cooling-rate", rate)
+            return sum(a["fraction"] for a in found["arrests"]), found["back_diffusion"]
+
+        none = answer("Al-4.5Cu", "--path", "scheil")["arrests"][0]["fraction"]
+        for rule in ("clyne-kurz", "ohnaka"):
+            (fast, _), (slow, back) = share(rule, "100 K/s"), share(rule, "0.01 K/s")
+            self.assertLess(slow, fast)
+            self.assertLess(fast, none)
+            # Bower, Brody & Flemings (1966), from memory: spacing 7.5 um (t/s)^0.39; D as in the alloy file.
+            spacing = 7.5e-6 * back["local_solidification_time_s"] ** 0.39
+            self.assertAlmostEqual(back["arm_spacing_m"] / spacing, 1, places=9)
+            number = 4 * 5e-13 * back["local_solidification_time_s"] / spacing**2
+            self.assertAlmostEqual(back["diffusion_number"] / number, 1, places=9)
+
     def test_what_cannot_be_is_refused(self):
         for arguments, words in (
             (["Al-4.5Cu", "--composition", "Cu 40 %"], "outside the diagram"),
@@ -59,6 +75,9 @@ class Alloy(unittest.TestCase):
             (["Al", "--composition", "Cu 4 %"], "no binary lines"),
             (["Al-4.5Cu", "--path", "pure"], "has data for"),
             (["steel-0.25C", "--path", "scheil"], "never ends"),
+            (["Al-4.5Cu", "--cooling-rate", "1 K"], "expected a cooling rate"),
+            (["Al", "--cooling-rate", "1 K/s"], "no data on back-diffusion"),
+            (["Al-4.5Cu", "--path", "ohnaka"], "more with --cooling-rate"),
             (["Al-4.5C"], "did you mean 'Al-4.5Cu'"),
         ):
             done = ask(*arguments)

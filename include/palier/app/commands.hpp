@@ -25,9 +25,11 @@ struct RunOptions {
 struct AlloyOptions {
   std::string name;  ///< in the library or beside, or a file ending in .yaml
   std::string library;
-  std::string composition;  ///< "Cu 4.5 %"; empty: that of the file
-  std::string rule;         ///< of the path told in detail; empty: the file's default
-  bool table = false;       ///< fraction solid against temperature
+  std::string composition;   ///< "Cu 4.5 %"; empty: that of the file
+  std::string rule;          ///< of the path told in detail; empty: the file's default
+  std::string cooling_rate;  ///< "1 K/s": adds the rules of back-diffusion; empty: none
+  std::string diagram;       ///< picture to draw, .png or .svg; empty: none
+  bool table = false;        ///< fraction solid against temperature
   bool json = false;
 };
 

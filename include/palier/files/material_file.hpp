@@ -9,6 +9,7 @@
 #include "palier/alloy/diagram.hpp"
 #include "palier/alloy/enthalpy_curve.hpp"
 #include "palier/alloy/path.hpp"
+#include "palier/alloy/ripening.hpp"
 #include "palier/files/case_file.hpp"
 #include "palier/files/map_reader.hpp"
 
@@ -39,6 +40,12 @@ struct BinaryAlloy {
   std::shared_ptr<const alloy::PhaseDiagram> diagram;
 };
 
+/// What the rules of back-diffusion need besides a binary's lines.
+struct BackDiffusionData {
+  double diffusivity = 0;    ///< of the solute in the solid [m2/s]
+  alloy::Ripening ripening;  ///< of the secondary arms
+};
+
 /// An alloy file as read.
 struct AlloyFile {
   MaterialFile file;
@@ -47,6 +54,7 @@ struct AlloyFile {
   std::optional<double> pure_melting_point;  ///< [K]
   std::optional<BinaryAlloy> binary;
   std::optional<alloy::SolidificationPath> measured;
+  std::optional<BackDiffusionData> back_diffusion;
 };
 
 /// A mold file as read.
@@ -61,6 +69,14 @@ std::vector<std::string> rules_of(const AlloyFile& alloy);
 /// Path by one of rules_of. @param composition [mass %], of a binary. Throws base::InputError where the rule does not
 /// end.
 alloy::SolidificationPath path_of(const std::string& rule, const AlloyFile& alloy, double composition);
+
+/// Names of the rules that also need the time freezing takes: "brody-flemings", "clyne-kurz", "ohnaka"; none where the
+/// file lacks data on back-diffusion.
+std::vector<std::string> timed_rules_of(const AlloyFile& alloy);
+
+/// Path by one of timed_rules_of after a local solidification time [s]. Throws base::InputError as its rule does.
+alloy::SolidificationPath timed_path_of(const std::string& rule, const AlloyFile& alloy, double composition,
+                                        double local_solidification_time);
 
 /// Path of an alloy's file by its name, outside a case. Throws base::InputError with the nearest names.
 std::string find_alloy(const std::string& name, const MaterialFolders& folders);

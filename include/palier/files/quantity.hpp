@@ -17,6 +17,8 @@ enum class QuantityKind {
   time,
   conductance,    ///< also film coefficients [W/m2/K]
   conductivity,   ///< [W/m/K]
+  diffusivity,    ///< [m2/s]
+  cooling_rate,   ///< [K/s]
   heat_capacity,  ///< [J/kg/K]
   density,
   latent_heat,  ///< [J/kg]

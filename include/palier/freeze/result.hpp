@@ -1,8 +1,11 @@
 // What a run of one section gives back, in SI units.
 #pragma once
 
+#include <optional>
 #include <string>
 #include <vector>
+
+#include "palier/alloy/path.hpp"
 
 namespace palier::freeze {
 
@@ -39,6 +42,7 @@ struct History {
 };
 
 struct Result {
+  std::optional<alloy::SolidificationPath> path;              ///< the one used; always set
   double solidification_time = 0;                             ///< last point of the metal [s]; NaN: stopped before
   double solidification_time_error = 0;                       ///< numerical [s]
   double last_to_freeze = 0;                                  ///< its depth [m]

@@ -42,7 +42,10 @@ struct Section {
   std::string alloy;
   alloy::MetalProperties metal;
   std::optional<alloy::SolidificationPath> path;  ///< always set in a valid section
-  double pouring_temperature = 0;                 ///< [K]
+  /// Where the path depends on the time freezing takes, as under back-diffusion: the path after a local solidification
+  /// time [s]; `path` is then a first guess. Empty: `path` it is.
+  std::function<alloy::SolidificationPath(double)> path_after;
+  double pouring_temperature = 0;  ///< [K]
   /// Temperature of the metal at the start over the radius [m] -> [K]; empty: pouring_temperature everywhere.
   std::function<double(double)> start_profile;
   /// plate: the right side; cylinder and sphere: outside

@@ -33,6 +33,7 @@ class Watch {
   std::vector<double> start_, end_;
   std::vector<char> started_, ended_;
   double frozen_, last_radius_;
+  bool liquid_seen_ = false;
   double met_radius_;  ///< where two fronts met [m]
 };
 
