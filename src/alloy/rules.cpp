@@ -2,11 +2,13 @@
 #include <algorithm>
 #include <boost/math/tools/roots.hpp>
 #include <cmath>
+#include <functional>
 #include <memory>
 #include <utility>
 
 #include "palier/alloy/diagram.hpp"
 #include "palier/base/error.hpp"
+#include "scheil_integral.hpp"
 
 namespace palier::alloy {
 namespace {
@@ -25,6 +27,15 @@ double lever_solidus(const PhaseDiagram& diagram, double composition, double low
   const auto bracket = boost::math::tools::toms748_solve(solid_excess, low, liquidus,
                                                          boost::math::tools::eps_tolerance<double>(52), iterations);
   return 0.5 * (bracket.first + bracket.second);
+}
+
+/// Fraction liquid over temperature by Scheil's rule: d ln(fraction) = -d ln(C) / (1 - k).
+std::function<double(double)> liquid_left_by_scheil(const Diagram& diagram, double composition, const Invariant& last) {
+  if (const std::optional<double> k = diagram->constant_partition())
+    return [diagram, composition, power = -1 / (1 - *k)](double T) {
+      return std::pow(std::max(diagram->tie_line(T).liquid / composition, 1.0), power);
+    };
+  return [integral = ScheilIntegral(diagram, composition, last)](double T) { return integral.liquid_left(T); };
 }
 
 }  // namespace
@@ -62,12 +73,7 @@ SolidificationPath scheil_path(const Diagram& diagram, double composition) {
   p.rule = "scheil";
   p.liquidus = diagram->liquidus(composition);
   p.end_of_freezing = last->temperature;
-  // d ln(liquid fraction) = -d ln(C) / (1 - k): the liquid left when its composition has risen to C.
-  const std::optional<double> k = diagram->constant_partition();
-  if (!k) throw base::InputError("Scheil's rule needs a constant partition coefficient here");
-  const auto left = [diagram, composition, power = -1 / (1 - *k)](double T) {
-    return std::pow(std::max(diagram->tie_line(T).liquid / composition, 1.0), power);
-  };
+  const auto left = liquid_left_by_scheil(diagram, composition, *last);
   // With k close to 1 the share left for the eutectic can be too small for a number.
   if (const double share = left(last->temperature); share > 0) p.arrests = {{last->temperature, share, last->reaction}};
   p.fraction_above = [left](double T) { return 1 - left(T); };

@@ -18,7 +18,7 @@ struct TieLine {
 
 /// An invariant reaction that ends the range of two phases.
 struct Invariant {
-  std::string reaction;  ///< "eutectic"
+  std::string reaction;  ///< "eutectic", or "melting point" of the solute where both elements mix in any proportion
   double temperature;    ///< [K]
   double liquid;         ///< composition of the liquid that takes part [mass %]
 };
@@ -56,7 +56,8 @@ std::shared_ptr<const PhaseDiagram> make_diagram(BinaryLines lines);
 SolidificationPath lever_path(const std::shared_ptr<const PhaseDiagram>& diagram, double composition);
 
 /// Scheil's rule: no diffusion in the solid, uniform liquid. Source: E. Scheil, Z. Metallkunde 34 (1942) 70.
-/// Without an eutectic it never ends and is refused with InputError.
+/// A closed form where the partition coefficient is constant, integrated along the lines where it varies.
+/// Without an invariant it never ends and is refused with InputError.
 SolidificationPath scheil_path(const std::shared_ptr<const PhaseDiagram>& diagram, double composition);
 
 }  // namespace palier::alloy
