@@ -25,7 +25,7 @@ const char* name_of(Mixing mixing) {
     case Mixing::scheil:
       return "scheil";
     case Mixing::partial:
-      return "partial equilibrium";
+      return "partial";
   }
   throw base::InputError("unknown rule of mixing");
 }

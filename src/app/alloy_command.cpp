@@ -124,6 +124,18 @@ Json diagram_of(const files::BinaryAlloy& binary) {
   return out;
 }
 
+/// Contents of the elements of a dilute alloy or a steel where freezing begins and ends [mass %].
+struct EndContents {
+  std::vector<double> first_solid, last_liquid;
+};
+
+/// None for other alloys, and for the measured path.
+std::optional<EndContents> ends_of(const files::AlloyFile& alloy, const alloy::SolidificationPath& told) {
+  if (told.rule() == "measured" || files::elements_of(alloy).empty()) return std::nullopt;
+  const alloy::DiluteFreezing freezing = files::freezing_of(told.rule(), alloy);
+  return EndContents{freezing.first_solid().solid, freezing.last_liquid().liquid};
+}
+
 Json json_of(const files::AlloyFile& alloy, double composition, const std::vector<Outlook>& all,
              const alloy::SolidificationPath& told, const std::optional<BackDiffusionAt>& back) {
   Json out;
@@ -132,6 +144,8 @@ Json json_of(const files::AlloyFile& alloy, double composition, const std::vecto
     out["solute"] = alloy.binary->solute;
     out["composition_mass_percent"] = composition;
   }
+  const std::vector<files::ElementContent> elements = files::elements_of(alloy);
+  for (const files::ElementContent& e : elements) out["elements_mass_percent"][e.element] = e.composition;
   out["rule"] = told.rule();
   out["liquidus_C"] = told.liquidus() - kCelsius;
   out["end_of_freezing_C"] = Json::object();
@@ -147,7 +161,13 @@ Json json_of(const files::AlloyFile& alloy, double composition, const std::vecto
   for (const alloy::Arrest& a : told.arrests())
     out["arrests"].push_back(
         {{"temperature_C", a.temperature - kCelsius}, {"reaction", a.reaction}, {"fraction", a.fraction}});
-  if (const auto first = told.solute(told.liquidus()), last = told.solute(told.end_of_freezing()); first && last) {
+  if (const auto ends = ends_of(alloy, told)) {
+    for (std::size_t i = 0; i < elements.size(); ++i) {
+      out["first_solid_elements_mass_percent"][elements[i].element] = ends->first_solid[i];
+      out["last_liquid_elements_mass_percent"][elements[i].element] = ends->last_liquid[i];
+    }
+  } else if (const auto first = told.solute(told.liquidus()), last = told.solute(told.end_of_freezing());
+             first && last) {
     out["first_solid_mass_percent"] = first->solid;
     out["last_liquid_mass_percent"] = last->liquid;
   }
@@ -179,7 +199,14 @@ void print(const files::AlloyFile& alloy, double composition, const std::vector<
     fmt::print("{:>16}{:>14.1f}{:>12.1f}  {}\n", o.rule, o.path->end_of_freezing() - kCelsius, o.path->freezing_range(),
                arrests.empty() ? "none" : arrests);
   }
-  if (const auto first = told.solute(told.liquidus()), last = told.solute(told.end_of_freezing()); first && last)
+  if (const auto ends = ends_of(alloy, told)) {
+    const std::vector<files::ElementContent> elements = files::elements_of(alloy);
+    fmt::print("\n{:>16}{:>14}{:>14}{:>14}  ({} path)\n", "element, wt%", "alloy", "first solid", "last liquid",
+               told.rule());
+    for (std::size_t i = 0; i < elements.size(); ++i)
+      fmt::print("{:>16}{:>14.4g}{:>14.4g}{:>14.4g}\n", elements[i].element, elements[i].composition,
+                 ends->first_solid[i], ends->last_liquid[i]);
+  } else if (const auto first = told.solute(told.liquidus()), last = told.solute(told.end_of_freezing()); first && last)
     fmt::print("\nFirst solid {:.3g} wt%, last liquid {:.3g} wt% {} ({} path).\n", first->solid, last->liquid,
                alloy.binary->solute, told.rule());
   if (back)
@@ -196,9 +223,9 @@ void print(const files::AlloyFile& alloy, double composition, const std::vector<
 }  // namespace
 
 void show_alloy(const AlloyOptions& options) {
-  const files::AlloyFile alloy = files::read_alloy(files::find_alloy(options.name, {".", options.library}));
-  double composition = alloy.binary ? alloy.binary->composition : 0;
-  if (!options.composition.empty()) composition = files::named_composition(options.composition, alloy);
+  files::AlloyFile alloy = files::read_alloy(files::find_alloy(options.name, {".", options.library}));
+  if (!options.composition.empty()) alloy = files::with_composition(std::move(alloy), options.composition);
+  const double composition = alloy.binary ? alloy.binary->composition : 0;
   const std::optional<BackDiffusionAt> back = back_diffusion_at(options.cooling_rate, alloy, composition);
   const std::vector<Outlook> all = outlooks(alloy, composition, back);
   const std::string rule = options.rule.empty() ? alloy.default_path : options.rule;

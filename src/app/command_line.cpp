@@ -63,7 +63,8 @@ int dispatch(int argc, char** argv) {
       "Example: palier alloy Al-4.5Cu --composition 'Cu 5 %' --table");
   alloy_command->add_option("NAME", alloy_options.name, "Alloy of the library or beside, or a file ending in .yaml")
       ->required();
-  alloy_command->add_option("--composition", alloy_options.composition, "Such as 'Cu 5 %'; default: that of the file");
+  alloy_command->add_option("--composition", alloy_options.composition,
+                            "Such as 'Cu 5 %' or 'Si 7.4 %, Mg 0.35 %'; default: that of the file");
   alloy_command->add_option("--path", alloy_options.rule, "Rule told in detail; default: that of the file");
   alloy_command->add_option("--cooling-rate", alloy_options.cooling_rate,
                             "Mean rate over freezing, such as '1 K/s': adds the rules of back-diffusion");

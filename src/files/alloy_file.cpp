@@ -65,16 +65,27 @@ alloy::SolidificationPath read_measured(const MapReader& map) {
 bool has_path(const AlloyFile& alloy, const std::string& rule) {
   if (rule == "pure") return alloy.pure_melting_point.has_value();
   if (rule == "measured") return alloy.measured.has_value();
-  return alloy.binary.has_value();
+  if (rule == "partial") return alloy.dilute || alloy.steel;
+  return alloy.binary || alloy.dilute || alloy.steel;
+}
+
+void refuse_two_kinds(const MapReader& map) {
+  std::vector<std::string> kinds;
+  for (const char* kind : {"pure", "binary lines", "dilute", "steel"})
+    if (map.has(kind)) kinds.push_back(fmt::format("'{}'", kind));
+  if (kinds.size() > 1)
+    map.fail(kinds[1].substr(1, kinds[1].size() - 2),
+             fmt::format("found {}; expected at most one of them", fmt::join(kinds, " and ")));
 }
 
 void read_freezing(const MapReader& map, AlloyFile& alloy) {
   alloy.default_path = map.choice("default path");
-  if (map.has("pure") && map.has("binary lines"))
-    map.fail("binary lines", "found 'pure' and 'binary lines'; expected at most one of them");
+  refuse_two_kinds(map);
   if (map.has("pure"))
     alloy.pure_melting_point = read_sourced_value(map.map("pure", "freezing: pure"), "melting point");
   if (map.has("binary lines")) alloy.binary = read_binary(map.map("binary lines", "freezing: binary lines"));
+  if (map.has("dilute")) alloy.dilute = read_dilute(map.map("dilute", "freezing: dilute"));
+  if (map.has("steel")) alloy.steel = read_steel(map.map("steel", "freezing: steel"));
   if (map.has("measured")) alloy.measured = read_measured(map.map("measured", "freezing: measured"));
   if (map.has("back-diffusion")) {
     if (!alloy.binary) map.fail("back-diffusion", "found 'back-diffusion' without 'binary lines'; expected both");
@@ -85,7 +96,8 @@ void read_freezing(const MapReader& map, AlloyFile& alloy) {
   }
   if (!has_path(alloy, alloy.default_path))
     map.fail("default path", fmt::format("found '{}', but the file has no data for it", alloy.default_path),
-             "pure needs 'pure', lever and scheil need 'binary lines', measured needs 'measured'");
+             "pure needs 'pure', lever and scheil need 'binary lines', 'dilute' or 'steel', partial needs 'dilute' or "
+             "'steel', measured needs 'measured'");
 }
 
 }  // namespace
@@ -94,6 +106,7 @@ std::vector<std::string> rules_of(const AlloyFile& alloy) {
   std::vector<std::string> rules;
   if (alloy.pure_melting_point) rules.emplace_back("pure");
   if (alloy.binary) rules.insert(rules.end(), {"lever", "scheil"});
+  if (alloy.dilute || alloy.steel) rules.insert(rules.end(), {"lever", "scheil", "partial"});
   if (alloy.measured) rules.emplace_back("measured");
   return rules;
 }
@@ -117,6 +130,7 @@ alloy::SolidificationPath timed_path_of(const std::string& rule, const AlloyFile
 alloy::SolidificationPath path_of(const std::string& rule, const AlloyFile& alloy, double composition) {
   if (rule == "pure") return alloy::pure_path(*alloy.pure_melting_point);
   if (rule == "measured") return *alloy.measured;
+  if (!alloy.binary) return freezing_of(rule, alloy).path();
   if (rule == "lever") return alloy::lever_path(alloy.binary->diagram, composition);
   return alloy::scheil_path(alloy.binary->diagram, composition);
 }

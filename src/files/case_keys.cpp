@@ -83,7 +83,7 @@ KeyTable section() {
             {},
             "",
             "",
-            {"lever", "scheil", "brody-flemings", "clyne-kurz", "ohnaka", "pure", "measured"},
+            {"lever", "scheil", "partial", "brody-flemings", "clyne-kurz", "ohnaka", "pure", "measured"},
             "default: the alloy's",
             "rule of the solidification path"},
            {"superheat",

@@ -39,6 +39,8 @@ std::string value_words(const KeySpec& spec) {
       return "list of texts";
     case ValueForm::map:
       return "mapping, see below";
+    case ValueForm::maps:
+      return "list of mappings, see below";
     default:
       return "list of wall entries";
   }

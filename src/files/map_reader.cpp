@@ -201,6 +201,17 @@ MapReader MapReader::map(const std::string& key, const std::string& table) const
   return MapReader(reading_, required(key), path(key), reading_.keys.table(table));
 }
 
+std::vector<MapReader> MapReader::maps(const std::string& key, const std::string& table) const {
+  const SourceNode& list = required(key);
+  if (list.kind != SourceNode::Kind::list || list.items.empty())
+    fail(key, fmt::format("{}; expected a list of entries, each with a '-'",
+                          list.kind == SourceNode::Kind::list ? "found an empty list" : found(list)));
+  std::vector<MapReader> result;
+  for (const SourceNode& item : list.items)
+    result.emplace_back(reading_, item, fmt::format("{}[{}]", path(key), result.size()), reading_.keys.table(table));
+  return result;
+}
+
 void MapReader::note(const std::string& key, const std::string& value) const { note(key, value, reading_.from); }
 
 void MapReader::note(const std::string& key, const std::string& value, const std::string& from) const {

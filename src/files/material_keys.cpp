@@ -104,6 +104,83 @@ KeyTable binary_lines() {
             "Scheil's rule needs it"}}};
 }
 
+KeySpec element_name() { return {"element", Form::text, {}, "", "", {}, "required", "its symbol, e.g. Si"}; }
+KeySpec element_content() {
+  return {"composition", Form::sourced, Kind::mass_share, "0 wt%", "60 wt%", {}, "required", "content of the alloy"};
+}
+KeySpec elements(const std::string& meaning) { return {"elements", Form::maps, {}, "", "", {}, "required", meaning}; }
+KeySpec end_temperature() {
+  return {"end temperature", Form::sourced,
+          Kind::temperature, "0 K",
+          "4000 K",          {},
+          "optional",        "at which the last liquid freezes, such as a eutectic"};
+}
+KeySpec largest_fraction() {
+  return {"largest fraction",
+          Form::sourced,
+          Kind::fraction,
+          "0.01",
+          "0.9999",
+          {},
+          "optional",
+          "fraction solid at which the last liquid freezes, where the rule does not use it up by itself"};
+}
+
+KeyTable dilute() {
+  return {"freezing: dilute",
+          "Elements in a base metal that do not feel each other: the liquidus is the melting point plus slope times "
+          "content of each. `scheil` and `partial` need `end temperature` or `largest fraction`; where both are "
+          "given, whichever comes first ends freezing.",
+          {{"base", Form::text, {}, "", "", {}, "required", "symbol of the base metal, e.g. Al"},
+           {"melting point", Form::sourced, Kind::temperature, "0 K", "4000 K", {}, "required", "of the base metal"},
+           elements("one entry for each element"),
+           end_temperature(),
+           largest_fraction()}};
+}
+
+KeyTable dilute_element() {
+  return {"freezing: dilute: element",
+          "One element.",
+          {element_name(),
+           element_content(),
+           {"liquidus slope",
+            Form::sourced,
+            Kind::slope,
+            "-1000 K/wt%",
+            "1000 K/wt%",
+            {},
+            "required",
+            "negative where the element lowers the liquidus"},
+           {"partition coefficient",
+            Form::sourced,
+            Kind::ratio,
+            "0.0001",
+            "20",
+            {},
+            "required",
+            "element in the solid over element in the liquid"},
+           {"fast",
+            Form::choice,
+            {},
+            "",
+            "",
+            {"true", "false"},
+            "default: false",
+            "whether it evens out in the solid by the rule `partial`"}}};
+}
+
+KeyTable steel() {
+  return {"freezing: steel",
+          "A low-alloy steel by straight lines of iron-carbon with its peritectic; the other elements with slopes and "
+          "partition coefficients of Won and Thomas (2001), those of P from memory. `scheil` needs `end temperature` "
+          "or `largest fraction`, `partial` as well where there are elements beside carbon; where both are given, "
+          "whichever comes first ends freezing.",
+          {elements("one entry for each element, C among them; besides it Si, Mn, P and S are known"),
+           end_temperature(), largest_fraction()}};
+}
+
+KeyTable steel_element() { return {"freezing: steel: element", "One element.", {element_name(), element_content()}}; }
+
 FileKeys make_alloy() {
   return {
       "alloy file",
@@ -129,23 +206,29 @@ FileKeys make_alloy() {
          notes()}},
        {"solid or liquid", "Properties of one phase.", {heat_capacity(), conductivity()}},
        {"freezing",
-        "At most one of `pure` and `binary lines`; `measured` may stand beside it or alone.",
+        "At most one of `pure`, `binary lines`, `dilute` and `steel`; `measured` may stand beside it or alone.",
         {{"default path",
           Form::choice,
           {},
           "",
           "",
-          {"lever", "scheil", "pure", "measured"},
+          {"lever", "scheil", "partial", "pure", "measured"},
           "required",
           "rule of the solidification path where the case names none"},
          {"pure", Form::map, {}, "", "", {}, "optional", "a metal that freezes at one temperature"},
          {"binary lines", Form::map, {}, "", "", {}, "optional", "lines of a binary phase diagram"},
+         {"dilute", Form::map, {}, "", "", {}, "optional", "elements that do not feel each other"},
+         {"steel", Form::map, {}, "", "", {}, "optional", "a low-alloy steel, by its carbon and other elements"},
          {"measured", Form::map, {}, "", "", {}, "optional", "fraction solid from a thermal-analysis record"},
          {"back-diffusion", Form::map, {}, "", "", {}, "optional", "beside binary lines: what its rules need"}}},
        {"freezing: pure",
         "A pure metal.",
         {{"melting point", Form::sourced, Kind::temperature, "0 K", "4000 K", {}, "required", "of the metal"}}},
        binary_lines(),
+       dilute(),
+       dilute_element(),
+       steel(),
+       steel_element(),
        back_diffusion(),
        {"freezing: measured",
         "Fraction solid against falling temperature. What is left at the last point freezes there.",

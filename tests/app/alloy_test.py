@@ -67,6 +67,45 @@ class Alloy(unittest.TestCase):
             number = 4 * 5e-13 * back["local_solidification_time_s"] / spacing**2
             self.assertAlmostEqual(back["diffusion_number"] / number, 1, places=9)
 
+    def test_dilute_alloy_by_scheil_is_that_of_the_closed_form(self):
+        # Scheil (1942) for each element: C = C0 f^(k-1), T = Tm + sum of slope C; lines as in the alloy file.
+        found = answer("Al-7Si-0.55Mg", "--composition", "Si 6.5 %, Mg 0.4 %", "--path", "scheil")
+        lines = {"Si": (6.5, -6.613, 0.131), "Mg": (0.4, -4.46, 0.48)}
+        self.assertEqual(found["elements_mass_percent"], {"Si": 6.5, "Mg": 0.4})
+        for T, solid in found["path"][:-1]:
+            at_T = 660.323 + sum(m * c * (1 - solid) ** (k - 1) for c, m, k in lines.values())
+            self.assertAlmostEqual(T, at_T, places=8)
+        last = found["arrests"][0]
+        self.assertEqual((last["temperature_C"], last["reaction"]), (574, "last liquid"))
+        for element, (c, _, k) in lines.items():
+            self.assertAlmostEqual(found["first_solid_elements_mass_percent"][element], k * c, places=12)
+            self.assertAlmostEqual(found["last_liquid_elements_mass_percent"][element],
+                                   c * last["fraction"] ** (k - 1), places=8)
+
+    def test_partial_equilibrium_lies_between_lever_and_scheil(self):
+        ends = answer("steel-0.25C-0.4Si-0.7Mn")["end_of_freezing_C"]
+        self.assertGreater(ends["lever"], ends["partial"] + 1)
+        self.assertGreater(ends["partial"], ends["scheil"] + 1)
+
+    def test_steel_without_other_elements_is_that_of_iron_and_carbon(self):
+        # Lever rule in the textbook diagram of iron-carbon: at 0.25 % carbon the liquid left at the peritectic,
+        # (0.25 - 0.09)/(0.53 - 0.09), takes up all delta ferrite and leaves (0.25 - 0.17)/(0.53 - 0.17).
+        found = answer("steel-0.25C-0.4Si-0.7Mn", "--composition", "Si 0 %, Mn 0 %, P 0 %, S 0 %", "--path", "lever")
+        (arrest,) = found["arrests"]
+        self.assertEqual(arrest["reaction"], "peritectic")
+        self.assertAlmostEqual(arrest["temperature_C"], 1495, places=9)
+        self.assertAlmostEqual(arrest["fraction"], 0.16 / 0.44 - 0.08 / 0.36, places=9)
+        self.assertAlmostEqual(found["liquidus_C"], 1538 - 43 / 0.53 * 0.25, places=9)
+
+    def test_elements_not_named_keep_their_content(self):
+        found = answer("steel-0.25C-0.4Si-0.7Mn", "--composition", "Mn 1 %, C 0.2 %")["elements_mass_percent"]
+        self.assertEqual({e: round(c, 12) for e, c in found.items()},
+                         {"C": 0.2, "Si": 0.4, "Mn": 1, "P": 0.02, "S": 0.02})
+
+    def test_elements_are_shown_to_a_person(self):
+        told = ask("steel-0.25C-0.4Si-0.7Mn", "--path", "partial").stdout
+        self.assertRegex(told, r"element, wt% +alloy +first solid +last liquid +\(partial path\)\n +C +0\.25 ")
+
     def test_what_cannot_be_is_refused(self):
         for arguments, words in (
             (["Al-4.5Cu", "--composition", "Cu 40 %"], "outside the diagram"),
@@ -78,6 +117,11 @@ class Alloy(unittest.TestCase):
             (["Al-4.5Cu", "--cooling-rate", "1 K"], "expected a cooling rate"),
             (["Al", "--cooling-rate", "1 K/s"], "no data on back-diffusion"),
             (["Al-4.5Cu", "--path", "ohnaka"], "more with --cooling-rate"),
+            (["Al-7Si-0.55Mg", "--composition", "Si 7 %, Cu 1 %"], "the elements of Al-7Si-0.55Mg are Si, Mg"),
+            (["Al-7Si-0.55Mg", "--composition", "Si 7 %, Si 6 %"], "twice"),
+            (["Al-7Si-0.55Mg", "--composition", "Si 7 at%"], "state each in wt%"),
+            (["steel-0.25C-0.4Si-0.7Mn", "--composition", "C 3 %"], "for a steel"),
+            (["Al-4.5Cu", "--path", "partial"], "has data for: lever, scheil"),
             (["Al-4.5C"], "did you mean 'Al-4.5Cu'"),
         ):
             done = ask(*arguments)

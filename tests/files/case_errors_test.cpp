@@ -107,6 +107,15 @@ TEST_CASE("errors of the section and the top level", "[files][case][errors]") {
       {"plate.yaml", "alloy: test-binary", "alloy: test-pure\n  composition: 4 wt%",
        "case.yaml:8:16: section.composition: found a composition, but test-pure has no binary lines; remove it, or "
        "take an alloy with binary lines"},
+      {"plate.yaml", "alloy: test-binary", "alloy: test-dilute\n  composition: 4 wt%",
+       "case.yaml:8:16: section.composition: found a composition, but test-dilute has no binary lines; remove it, or "
+       "take an alloy with binary lines"},
+      {"plate.yaml", "alloy: test-binary", "alloy: test-steel\n  path: measured",
+       "case.yaml:8:9: section.path: found 'measured', but test-steel has no data for it; expected lever, scheil or "
+       "partial"},
+      {"plate.yaml", "pour: 720 degC", "pour: 720 degC\n  path: partial",
+       "case.yaml:9:9: section.path: found 'partial', but test-binary has no data for it; expected lever, scheil or "
+       "measured"},
       {"plate.yaml", "pour: 720 degC", "pour: 720 degC\n  cells: 2",
        "case.yaml:9:10: section.cells: found '2'; expected between 4 and 20000"},
       {"plate.yaml", "pour: 720 degC", "pour: 720 degC\n  cells: 40.5",
@@ -116,7 +125,7 @@ TEST_CASE("errors of the section and the top level", "[files][case][errors]") {
        "library/alloys; did you mean 'test-binary'?"},
       {"plate.yaml", "alloy: test-binary", "alloy: Al-7Si",
        "case.yaml:7:10: section.alloy: found 'Al-7Si', but there is no file Al-7Si.yaml beside the case or in "
-       "library/alloys; known: test-binary, test-pure"},
+       "library/alloys; known: test-binary, test-dilute, test-pure, test-steel"},
       {"plate.yaml", "alloy: test-binary", "alloy: die.yaml",
        "die.yaml:2:1: found a mold file; expected an alloy file"},
       {"plate.yaml", "below: 400 degC", "below: 800 degC",

@@ -111,6 +111,20 @@ TEST_CASE("a sphere that only radiates and a plate with two different sides", "[
   CHECK(plate.outside.outer.kind == Boundary::Kind::adiabatic);
 }
 
+TEST_CASE("a case names the rule of an alloy of several elements", "[files][case][dilute]") {
+  const palier::test::Scratch scratch;
+  const std::string plate = palier::test::slurp(palier::test::fixtures() + "/cases/plate.yaml");
+  const auto section = [&](const std::string& alloy) {
+    const std::string text = palier::test::edited(plate, "alloy: test-binary", alloy);
+    return read_case(scratch.write("case.yaml", text), palier::test::library()).section;
+  };
+  CHECK(section("alloy: test-dilute").path->rule() == "partial");
+  const auto scheil = section("alloy: test-dilute\n  path: scheil");
+  CHECK(scheil.path->rule() == "scheil");
+  CHECK(scheil.path->liquidus() == Approx(617 + 273.15));
+  CHECK(scheil.path->end_of_freezing() == Approx(560 + 273.15));
+}
+
 TEST_CASE("every value is noted with where it came from", "[files][case][check]") {
   const CaseFile read = fixture("hollow-cylinder.yaml");
   CHECK(read.text == palier::test::slurp(read.path));

@@ -76,13 +76,14 @@ TEST_CASE("errors of alloy files", "[files][material][errors]") {
        "material.yaml:5:20: designation[1]: found a list; expected a text"},
       {"alloys/test-binary", "default path: scheil", "default path: pure",
        "material.yaml:15:17: freezing.default path: found 'pure', but the file has no data for it; pure needs 'pure', "
-       "lever and scheil need 'binary lines', measured needs 'measured'"},
+       "lever and scheil need 'binary lines', 'dilute' or 'steel', partial needs 'dilute' or 'steel', measured needs "
+       "'measured'"},
       {"alloys/test-binary", "default path: scheil", "default path: schiel",
-       "material.yaml:15:17: freezing.default path: found 'schiel'; expected lever, scheil, pure or measured; did you "
-       "mean 'scheil'?"},
+       "material.yaml:15:17: freezing.default path: found 'schiel'; expected lever, scheil, partial, pure or measured; "
+       "did you mean 'scheil'?"},
       {"alloys/test-binary", "  default path: scheil\n", "",
-       "material.yaml:15:3: freezing.default path: found no key 'default path'; expected lever, scheil, pure or "
-       "measured"},
+       "material.yaml:15:3: freezing.default path: found no key 'default path'; expected lever, scheil, partial, "
+       "pure or measured"},
       {"alloys/test-binary", "  binary lines:",
        "  pure:\n    melting point: {value: 660 degC, source: invented for the tests}\n  binary lines:",
        "material.yaml:19:5: freezing.binary lines: found 'pure' and 'binary lines'; expected at most one of them"},
@@ -124,7 +125,8 @@ TEST_CASE("errors of alloy files", "[files][material][errors]") {
        "equation; not empty"},
       {"alloys/test-pure", "  pure:\n    melting point: {value: 660 degC, source: invented for the tests}\n", "",
        "material.yaml:14:17: freezing.default path: found 'pure', but the file has no data for it; pure needs 'pure', "
-       "lever and scheil need 'binary lines', measured needs 'measured'"},
+       "lever and scheil need 'binary lines', 'dilute' or 'steel', partial needs 'dilute' or 'steel', measured needs "
+       "'measured'"},
   }));
   CAPTURE(row.from, row.to);
   CHECK(refusal(row) == row.message);

@@ -115,8 +115,14 @@ TEST_CASE("damaged files end in a refusal, not in a crash", "[files][mutation]")
   std::filesystem::copy(palier::test::library(), scratch.path("library"), std::filesystem::copy_options::recursive);
   std::filesystem::copy(palier::test::fixtures() + "/cases", scratch.path("cases"),
                         std::filesystem::copy_options::recursive);
-  const std::vector<std::string> cases{"plate", "hollow-cylinder", "sphere", "two-sides"};
-  const std::vector<std::string> materials{"library/alloys/test-binary", "library/alloys/test-pure",
+  const std::string plate = palier::test::edited(palier::test::slurp(palier::test::fixtures() + "/cases/plate.yaml"),
+                                                 "pour: 720 degC", "superheat: 60 K");
+  for (const std::string alloy : {"dilute", "steel"})
+    scratch.write("cases/" + alloy + ".yaml",
+                  palier::test::edited(plate, "alloy: test-binary", "alloy: test-" + alloy));
+  const std::vector<std::string> cases{"plate", "hollow-cylinder", "sphere", "two-sides", "dilute", "steel"};
+  const std::vector<std::string> materials{"library/alloys/test-binary",  "library/alloys/test-dilute",
+                                           "library/alloys/test-steel",   "library/alloys/test-pure",
                                            "library/molds/test-sand-dry", "cases/die"};
   Damage damage(20240611);
   int accepted = 0, refused = 0;

@@ -22,6 +22,7 @@ enum class ValueForm {
   sourced,     ///< {value, source} or {points, source}
   texts,       ///< a list of texts
   map,         ///< keys of its own
+  maps,        ///< a list of mappings with keys of their own
   walls,       ///< a list of wall entries
 };
 

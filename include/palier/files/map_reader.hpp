@@ -79,6 +79,8 @@ class MapReader {
   /// `true`; anything else is refused.
   void flag(const std::string& key) const;
   MapReader map(const std::string& key, const std::string& table) const;
+  /// A list of mappings, each with the keys of a table; at least one.
+  std::vector<MapReader> maps(const std::string& key, const std::string& table) const;
 
   /// Notes a value as standing in this file.
   void note(const std::string& key, const std::string& value) const;

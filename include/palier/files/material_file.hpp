@@ -7,9 +7,11 @@
 #include <vector>
 
 #include "palier/alloy/diagram.hpp"
+#include "palier/alloy/dilute.hpp"
 #include "palier/alloy/enthalpy_curve.hpp"
 #include "palier/alloy/path.hpp"
 #include "palier/alloy/ripening.hpp"
+#include "palier/alloy/steel.hpp"
 #include "palier/files/case_file.hpp"
 #include "palier/files/map_reader.hpp"
 
@@ -53,6 +55,8 @@ struct AlloyFile {
   std::string default_path;
   std::optional<double> pure_melting_point;  ///< [K]
   std::optional<BinaryAlloy> binary;
+  std::optional<alloy::DiluteAlloy> dilute;
+  std::optional<alloy::Steel> steel;
   std::optional<alloy::SolidificationPath> measured;
   std::optional<BackDiffusionData> back_diffusion;
 };
@@ -63,12 +67,25 @@ struct MoldFile {
   alloy::MoldProperties properties;
 };
 
-/// Names of the rules an alloy file has data for: "pure", "lever", "scheil", "measured".
+/// Names of the rules an alloy file has data for: "pure", "lever", "scheil", "partial", "measured".
 std::vector<std::string> rules_of(const AlloyFile& alloy);
 
-/// Path by one of rules_of. @param composition [mass %], of a binary. Throws base::InputError where the rule does not
-/// end.
+/// Path by one of rules_of. @param composition [mass %], of a binary; the others have that of the file. Throws
+/// base::InputError where the rule does not end.
 alloy::SolidificationPath path_of(const std::string& rule, const AlloyFile& alloy, double composition);
+
+/// An element and its content [mass %].
+struct ElementContent {
+  std::string element;
+  double composition = 0;
+};
+
+/// Contents of the elements of a dilute alloy or a steel, carbon of a steel first; none for other alloys.
+std::vector<ElementContent> elements_of(const AlloyFile& alloy);
+
+/// Freezing by lever, scheil or partial of an alloy with elements_of. Throws base::InputError where the rule does not
+/// end.
+alloy::DiluteFreezing freezing_of(const std::string& rule, const AlloyFile& alloy);
 
 /// Names of the rules that also need the time freezing takes: "brody-flemings", "clyne-kurz", "ohnaka"; none where the
 /// file lacks data on back-diffusion.
@@ -84,6 +101,11 @@ std::string find_alloy(const std::string& name, const MaterialFolders& folders);
 /// Both throw base::InputError with the place of what is wrong.
 AlloyFile read_alloy(const std::string& path);
 MoldFile read_mold(const std::string& path);
+
+/// Of the maps `dilute` and `steel`. Both throw base::InputError with the place of what is wrong, also where no alloy
+/// can freeze by these lines.
+alloy::DiluteAlloy read_dilute(const MapReader& map);
+alloy::Steel read_steel(const MapReader& map);
 
 /// A datum with its source that is one value; noted with its source.
 double read_sourced_value(const MapReader& map, const std::string& key);

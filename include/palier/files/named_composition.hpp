@@ -1,4 +1,4 @@
-// A composition given in words on the command line, such as "Cu 4.5 %".
+// A composition given in words on the command line, such as "Cu 4.5 %" or "Si 7.4 %, Mg 0.35 %".
 #pragma once
 
 #include <string>
@@ -7,8 +7,11 @@
 
 namespace palier::files {
 
-/// Solute of a binary alloy [mass %] from a text of element and amount; % alone means mass %, at% is converted.
-/// Throws base::InputError where the text names another element than the alloy's solute, or more than one.
-double named_composition(const std::string& text, const AlloyFile& alloy);
+/// The alloy with the composition that a text of elements and amounts names; % alone means mass %.
+///
+/// A binary takes its solute only, at% is converted. A dilute alloy or a steel takes any of its elements, in mass %;
+/// those not named keep what the file has. Measured freezing stays that of the file. Throws base::InputError where the
+/// text names an element the alloy does not have, or one twice, or where the alloy holds for its own composition only.
+AlloyFile with_composition(AlloyFile alloy, const std::string& text);
 
 }  // namespace palier::files
