@@ -148,7 +148,7 @@ inline BinarySystem cu_ni_energies() {
           {SolutionPhase("fcc", cu_fcc(), ni_fcc(), {{8047.72, 3.42217}, {-2041.3, 0.99714}})}};
 }
 
-/// From a public transcription of an SGTE-type set; whose assessment it is could not be made sure.
+/// From a public copy of an SGTE-type set; whose assessment it is could not be made sure.
 inline BinarySystem ag_cu_energies() {
   return {"Ag",
           "Cu",
@@ -158,7 +158,7 @@ inline BinarySystem ag_cu_energies() {
           {SolutionPhase("fcc", ag_fcc(), cu_fcc(), {{36772.58, -11.02847}, {-4612.43, 0.28869}})}};
 }
 
-/// From a public transcription of an SGTE-type set; whose assessment it is could not be made sure.
+/// From a public copy of an SGTE-type set; whose assessment it is could not be made sure.
 inline BinarySystem pb_sn_energies() {
   return {"Pb",
           "Sn",
