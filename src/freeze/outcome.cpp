@@ -5,6 +5,7 @@
 #include <string>
 
 #include "palier/base/error.hpp"
+#include "palier/freeze/crossing.hpp"
 #include "palier/freeze/recorder.hpp"
 #include "palier/freeze/watch.hpp"
 
@@ -27,24 +28,15 @@ double hottest(const Profile& profile, const heat::StepView& step, double time) 
   return T;
 }
 
-/// Time within a step at which a falling function of time passes zero, by bisection.
-template <class Function>
-double passes(const Function& f, double a, double b) {
-  for (int i = 0; i < 60; ++i) {
-    const double t = 0.5 * (a + b);
-    (f(t) > 0 ? a : b) = t;
-  }
-  return b;
-}
-
 /// Where the run ends within this step; nothing if it goes on.
 std::optional<double> stops_in(const Section& s, const Watch& watch, const Profile& profile,
                                const heat::StepView& step) {
   std::optional<double> stop;
   if (s.stop.below) {
     const auto f = [&](double t) { return hottest(profile, step, t) - *s.stop.below; };
-    if (std::isfinite(watch.frozen()) && f(step.end()) <= 0)
-      stop = f(step.begin()) > 0 ? passes(f, step.begin(), step.end()) : step.end();
+    const double before = f(step.begin()), after = f(step.end());
+    if (std::isfinite(watch.frozen()) && after <= 0)
+      stop = before > 0 ? falls_through_zero(f, step.begin(), step.end(), before, after) : step.end();
   } else if (std::isfinite(watch.frozen())) {
     stop = watch.frozen();
   }

@@ -91,7 +91,6 @@ bool set_by_hand(const Section& s) {
 
 Result run_with_path(const Section& section, const Progress& progress) {
   constexpr int kMostRefinements = 2;
-  const std::clock_t begin = std::clock();
   const std::shared_ptr<const alloy::EnthalpyCurve> metal = metal_curve(section);
   const auto tell = [&](double share) {
     if (progress) progress(share);
@@ -131,7 +130,6 @@ Result run_with_path(const Section& section, const Progress& progress) {
   r.history = std::move(out.history);
   r.remarks = remarks_on(section, r.history);
   if (reached > section.accuracy) r.remarks.push_back(accuracy_missed(reached, section.accuracy));
-  r.cpu_seconds = static_cast<double>(std::clock() - begin) / CLOCKS_PER_SEC;
   tell(1);
   return r;
 }
@@ -139,12 +137,17 @@ Result run_with_path(const Section& section, const Progress& progress) {
 }  // namespace
 
 Result run(const Section& section, const Progress& progress) {
-  if (!section.path_after) return run_with_path(section, progress);
-  const SettledPath settled = settle_path(section);
+  const std::clock_t begin = std::clock();
   Section with = section;
-  with.path = settled.path;
+  std::string settled_note;
+  if (section.path_after) {
+    const SettledPath settled = settle_path(section);
+    with.path = settled.path;
+    settled_note = in_words(settled);
+  }
   Result r = run_with_path(with, progress);
-  r.remarks.push_back(in_words(settled));
+  if (!settled_note.empty()) r.remarks.push_back(settled_note);
+  r.cpu_seconds = static_cast<double>(std::clock() - begin) / CLOCKS_PER_SEC;
   return r;
 }
 

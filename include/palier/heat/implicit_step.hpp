@@ -43,7 +43,6 @@ class ImplicitStep {
                      State<Real>& to, Real& error);
 
   /// Of the middle stage of the last step, at time + gamma * length.
-  const std::vector<Real>& middle_flow() const { return middle_flow_; }
   const Marks& middle_marks(int lane) const { return middle_marks_[static_cast<std::size_t>(lane)]; }
   /// What a boundary at an end has taken out over the last step [J].
   double heat_out(int lane, const State<Real>& from, const State<Real>& to, double length) const;
